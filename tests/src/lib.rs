@@ -1,0 +1,1 @@
+//! Shared means of the tests.
