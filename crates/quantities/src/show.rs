@@ -101,7 +101,9 @@ fn number(value: f64, decimals: i32) -> String {
         return "–".to_owned();
     }
     let decimals = usize::try_from(decimals.clamp(0, 12)).unwrap_or(0);
-    let text = format!("{:.decimals$}", half_up(value.abs(), decimals));
+    // Half up in decimal, where the binary value of a typed 0.125 stands a hair below.
+    let magnitude = value.abs() * (1.0 + 4.0 * f64::EPSILON);
+    let text = format!("{magnitude:.decimals$}");
     let (whole, fraction) =
         text.split_once('.').map_or((text.as_str(), None), |(w, f)| (w, Some(f)));
     let mut grouped = String::new();
@@ -117,13 +119,6 @@ fn number(value: f64, decimals: i32) -> String {
     }
     let zero = !text.chars().any(|c| matches!(c, '1'..='9'));
     if value < 0.0 && !zero { format!("−{grouped}") } else { grouped }
-}
-
-/// Half up in decimal, where the binary value of a typed 0.125 stands a hair below.
-fn half_up(value: f64, decimals: usize) -> f64 {
-    let nudge = value * 4.0 * f64::EPSILON;
-    let _ = decimals;
-    value + nudge
 }
 
 #[cfg(test)]

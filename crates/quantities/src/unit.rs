@@ -2,8 +2,8 @@
 //!
 //! Identifiers are our own and never change; symbols are the trade's, for the screen; UCUM codes stand beside
 //! them. Factors are exact by definition and composed from base definitions, never copied as products: the inch
-//! (25.4 mm), the pound (0.453 592 37 kg), the US gallon (231 in³), the Btu_IT (1 055.055 852 62 J), the ton of
-//! refrigeration (12 000 Btu_IT/h) as in NIST SP 811; mercury at 0 °C and water at 4 °C as conventional columns.
+//! (25.4 mm), the pound (0.453 592 37 kg), the US gallon (231 in³), the Btu of the International Table (1 055.055 852 62 J), the ton of
+//! refrigeration (12 000 Btu/h) as in NIST SP 811; mercury at 0 °C and water at 4 °C as conventional columns.
 
 use crate::Kind;
 
