@@ -30,7 +30,7 @@ fn ask(opened: State<'_, Opened>, request: &str) -> String {
 
 /// Opens the window and stays until it is closed.
 ///
-/// Where no window can be opened at all (no display, no WebKit), says so on the error stream and ends with status 1.
+/// Where the window cannot be opened, says so on the error stream and ends with status 1.
 #[cfg_attr(mobile, tauri::mobile_entry_point)]
 pub fn run() {
     let built = tauri::Builder::default()

@@ -60,19 +60,20 @@ fn cargo(arguments: &[&str]) -> String {
 /// The crates that are shipped, each with what it names outside its tests.
 fn named() -> BTreeMap<String, BTreeSet<String>> {
     let metadata: Value =
-        serde_json::from_str(&cargo(&["metadata", "--no-deps", "--format-version", "1"])).unwrap();
-    let packages = metadata["packages"].as_array().unwrap();
+        serde_json::from_str(&cargo(&["metadata", "--no-deps", "--format-version", "1"]))
+            .expect("cargo writes JSON");
+    let packages = metadata["packages"].as_array().expect("a list");
     packages
         .iter()
         .filter(|package| package["name"] != "dewledger-tests")
         .map(|package| {
-            let dependencies = package["dependencies"].as_array().unwrap();
+            let dependencies = package["dependencies"].as_array().expect("a list");
             let names = dependencies
                 .iter()
                 .filter(|dependency| dependency["kind"] != "dev")
-                .map(|dependency| dependency["name"].as_str().unwrap().to_owned())
+                .map(|dependency| dependency["name"].as_str().expect("a name").to_owned())
                 .collect();
-            (package["name"].as_str().unwrap().to_owned(), names)
+            (package["name"].as_str().expect("a name").to_owned(), names)
         })
         .collect()
 }
