@@ -1,1 +1,48 @@
-//! Under construction in this commit series.
+//! The checks: from readings to results, with their doubt, their working and their forms.
+//!
+//! One file a check. Each says what it asks ([`Check::form`]) and how it answers ([`Check::solve`]); screen, command
+//! line, ±, history and report come from that one definition. Pure functions: no I/O, no JSON, no clock.
+
+mod check;
+mod given;
+mod outcome;
+mod refusal;
+
+pub mod doubt;
+pub mod form;
+
+pub mod flow_block;
+pub mod pressure;
+pub mod process;
+pub mod split;
+pub mod state_block;
+pub mod water_state;
+
+pub mod air_heat;
+pub mod air_state;
+pub mod book_constants;
+pub mod condensate;
+pub mod mixing;
+
+pub use check::{About, Check, Group};
+pub use given::{Given, Moved, Reading};
+pub use outcome::{
+    Caution, Change, Figure, Label, Missing, Note, Offer, Outcome, Role, StatePoint, Step, Versus,
+    Weight,
+};
+pub use refusal::{Refusal, Stop, both};
+
+/// Every check, in the order in which a person is shown them. A new check is one file and one line here.
+pub static ALL: &[&dyn Check] = &[
+    &air_heat::AirHeat,
+    &air_state::AirState,
+    &book_constants::BookConstants,
+    &mixing::Mixing,
+    &condensate::Condensate,
+];
+
+/// The check with this identifier.
+#[must_use]
+pub fn find(id: &str) -> Option<&'static dyn Check> {
+    ALL.iter().copied().find(|check| check.about().id == id)
+}

@@ -89,7 +89,7 @@ mod tests {
         assert!((solubility - 0.226_00).abs() < 6e-5, "{solubility}");
     }
 
-    /// IAPWS G7-04 table 6: ln(k_H / GPa) at 300 and 400 K, through the solubility of the mixture.
+    /// IAPWS G7-04 table 6: `ln(k_H / GPa)` at 300 and 400 K, through the solubility of the mixture.
     #[test]
     fn solubility_agrees_with_iapws_g7_04() {
         for (t, n2, o2, ar) in

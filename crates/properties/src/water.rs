@@ -41,13 +41,13 @@ fn in_range(t: ThermodynamicTemperature) -> Result<f64, WaterError> {
     }
 }
 
-/// Density at 0.1 MPa, kg/m³. Range: −20 to 110 °C. Source: IAPWS SR6-08(2011).
+/// Density at a pressure, kg/m³. Range: −20 to 110 °C. Source: IAPWS SR6-08(2011).
 ///
 /// # Errors
 ///
 /// [`WaterError::TemperatureOutOfRange`].
-pub fn density(t: ThermodynamicTemperature) -> Result<MassDensity, WaterError> {
-    Ok(MassDensity::from_si(1.0 / liquid::liquid(in_range(t)?).volume))
+pub fn density(t: ThermodynamicTemperature, p: Pressure) -> Result<MassDensity, WaterError> {
+    Ok(MassDensity::from_si(1.0 / liquid::volume(in_range(t)?, p.si())))
 }
 
 /// Specific enthalpy at a pressure, J/kg, zero at the triple point. Range: −20 to 110 °C. Source: IAPWS SR6-08(2011).
