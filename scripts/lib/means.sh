@@ -64,9 +64,12 @@ need_packages() {
   done
   [ ${#missing[@]} -gt 0 ] || return 0
   say "Installing Debian packages: ${missing[*]}"
-  as_root apt-get update -qq &&
-    as_root env DEBIAN_FRONTEND=noninteractive apt-get install -qq -y --no-install-recommends "${missing[@]}" \
-      > /dev/null ||
+  if [ -z "${lists_are_fresh:-}" ]; then
+    as_root apt-get update -qq || say "The package lists could not be renewed; trying with the old ones."
+    lists_are_fresh=yes
+  fi
+  as_root env DEBIAN_FRONTEND=noninteractive apt-get install -qq -y --no-install-recommends "${missing[@]}" \
+    > /dev/null ||
     stop "These packages could not be installed: ${missing[*]}"
 }
 
