@@ -451,3 +451,12 @@ fn band(dry_bulb: Option<&Reading>, humidity: Reading) -> f64 {
         _ => NEAR_K,
     }
 }
+
+/// The air at a point of a form, when its readings and the pressure are complete and can be: for showing what they
+/// come to while the rest of the form is still blank.
+#[must_use]
+pub fn readout(given: &Given, prefix: &str) -> Option<MoistAir> {
+    given.reading(&format!("{prefix}.dry_bulb"))?;
+    let here = crate::pressure::here(given).ok()?;
+    Point { prefix, name: "read" }.read(given, here.pressure).ok().map(|read| read.air)
+}

@@ -4,11 +4,7 @@
 //! Tolerances: 2e-6 relative for W, h, v and flows, 1e-4 K for temperatures, 5e-4 K below freezing; where two near
 //! figures are subtracted, 1e-3 relative, since that is how far the two routes themselves are apart.
 
-#![expect(
-    clippy::unwrap_used,
-    clippy::panic,
-    reason = "a reference that cannot be read fails the test"
-)]
+#![expect(clippy::unwrap_used, reason = "a reference that cannot be read fails the test")]
 
 use dewledger_checks::{Given, Outcome, Reading, find};
 use dewledger_quantities::{Amount, Kind, Unit};

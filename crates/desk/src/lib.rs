@@ -1,1 +1,29 @@
-//! Under construction in this commit series.
+//! The application without a window: one request type, one reply type, one [`Desk::handle`].
+//!
+//! A request carries what a person typed; a reply carries finished text beside every SI value, so that a screen
+//! computes and parses nothing. The only crate that knows JSON. No window, no socket.
+
+mod answer;
+mod clock;
+mod demo;
+mod desk;
+mod drafts;
+mod entries;
+mod fault;
+mod form_view;
+mod overview;
+mod places;
+mod reply;
+mod request;
+mod result_view;
+mod typed;
+mod units;
+mod visits;
+
+pub mod air_rows;
+
+pub use clock::Clock;
+pub use desk::{Desk, OpenFault, VERSION, fault_json};
+pub use fault::schema;
+pub use reply::*;
+pub use request::*;

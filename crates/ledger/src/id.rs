@@ -70,7 +70,6 @@ ids! {
 /// A new identity at a moment.
 pub(crate) fn new(at: At) -> Uuid {
     let ms = u64::try_from(at.ms).unwrap_or(0);
-    #[expect(clippy::cast_possible_truncation, reason = "below a thousand million")]
     let nanos = (ms % 1000) as u32 * 1_000_000;
     Uuid::new_v7(Timestamp::from_unix(NoContext, ms / 1000, nanos))
 }

@@ -329,7 +329,8 @@ impl Ledger {
         Ok(heads.swap_remove(0))
     }
 
-    /// Every revision of a record, oldest first.
+    /// Every revision of a record, each after the one that it replaces. Clocks decide only between corrections
+    /// made apart.
     ///
     /// # Errors
     ///
@@ -339,7 +340,19 @@ impl Ledger {
             "SELECT {} FROM revision JOIN record ON record.id = revision.record WHERE record = ?1 ORDER BY at_ms, revision.id",
             COLUMNS.replace("id, record, parent", "revision.id, record, parent")
         );
-        self.select(&sql, [record.text()])
+        let mut left = self.select(&sql, [record.text()])?;
+        let mut ordered: Vec<Revision> = Vec::with_capacity(left.len());
+        while !left.is_empty() {
+            let ready = |revision: &Revision| {
+                revision
+                    .parent
+                    .is_none_or(|parent| ordered.iter().any(|before| before.id == parent))
+            };
+            // A parent that is not here (it was lost with a damaged file) holds nothing up.
+            let next = left.iter().position(ready).unwrap_or(0);
+            ordered.push(left.remove(next));
+        }
+        Ok(ordered)
     }
 
     /// What stands now of a kind, newest record first. Withdrawn ones are listed too and say so.

@@ -1,7 +1,5 @@
 //! A process that is killed while it saves loses nothing that it was told was stored.
 
-#![expect(clippy::unwrap_used, reason = "what fails here fails the test")]
-
 use std::io::{BufRead, BufReader, Write};
 use std::path::Path;
 use std::process::{Command, Stdio};

@@ -1,0 +1,359 @@
+//! Entries: checks filed, opened again, corrected, withdrawn.
+
+use dewledger_checks::form::Item;
+use dewledger_ledger::{Body, Head, Kind, RecordId, ResultRow as LedgerRow, Within};
+use dewledger_quantities::{Unit, UnitChoice};
+use serde::{Deserialize, Serialize};
+
+use crate::answer::Answer;
+use crate::clock;
+use crate::desk::{Asked, VERSION};
+use crate::drafts::{self, Kept, check, draft_id};
+use crate::form_view::{check_name, work};
+use crate::places::{self, equipment_id, json, site_id, visit_id};
+use crate::reply::{
+    EntryRow, EntryView, Fault, FaultCode, Filed, ReadingRow, Reply, RevisionRow, Solved, Stage,
+};
+use crate::request::{Place, Typed};
+use crate::result_view;
+use crate::typed::read_check;
+use crate::visits;
+
+/// An entry's body: what was typed, what came out.
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+pub(crate) struct FiledBody {
+    pub(crate) check: String,
+    pub(crate) typed: Typed,
+    pub(crate) readings: Vec<FiledReading>,
+    pub(crate) answer: Answer,
+}
+
+/// A reading as it was typed, with its name and what it was read as.
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+pub(crate) struct FiledReading {
+    pub(crate) key: String,
+    pub(crate) name: String,
+    pub(crate) text: String,
+    pub(crate) unit: String,
+    pub(crate) quantity: String,
+    pub(crate) si: f64,
+    pub(crate) half_width_si: Option<f64>,
+    #[serde(default)]
+    pub(crate) plus_minus: Option<String>,
+}
+
+/// The body of an entry; none where another version wrote what this one cannot read.
+pub(crate) fn filed(head: &Head) -> Option<FiledBody> {
+    serde_json::from_str(&head.body.text).ok()
+}
+
+fn record(entry: &str) -> Result<RecordId, Fault> {
+    Ok(RecordId::Entry(entry.parse().map_err(|_| Fault::not_found("That entry"))?))
+}
+
+fn place_of(body: &Body) -> Place {
+    Place {
+        site: body.site.map(|site| site.to_string()),
+        equipment: body.equipment.map(|equipment| equipment.to_string()),
+        visit: body.visit.map(|visit| visit.to_string()),
+    }
+}
+
+/// Works a check out; stores nothing.
+pub(crate) fn solve(
+    at: &Asked<'_>,
+    id: &str,
+    typed: &Typed,
+    place: &Place,
+) -> Result<Reply, Fault> {
+    let check = check(id)?;
+    let around = places::around(at, place, id, None)?;
+    Ok(Reply::Solved(Box::new(work(check, typed, &around, &at.state.units).solved)))
+}
+
+/// Every reading with its unit written beside it, so that a later choice of units does not change what it says.
+fn readings(kept: &Kept, units: &UnitChoice) -> Result<(Typed, Vec<FiledReading>), Fault> {
+    let check = check(&kept.check)?;
+    let read = read_check(check, &kept.typed, units);
+    if let Some((field, says)) = read.errors.iter().next() {
+        return Err(Fault::at(field.clone(), says.clone()));
+    }
+    let mut typed = kept.typed.clone();
+    let mut rows = Vec::new();
+    for section in &read.sections {
+        for item in &section.items {
+            let Item::Reading(item) = item else { continue };
+            let key = item.key.as_ref();
+            let Some(reading) = read.given.reading(key) else { continue };
+            let Some(entry) = typed.readings.get_mut(key) else { continue };
+            let unit = reading.unit.map_or("", |unit| unit.id);
+            entry.unit = Some(unit.to_owned());
+            let plus_minus =
+                entry.plus_minus.as_ref().filter(|pm| !pm.text.trim().is_empty()).map(|pm| {
+                    let unit = crate::typed::plus_minus_unit(item, Some(entry), units);
+                    let percent = pm.text.trim_end().ends_with('%');
+                    if percent {
+                        format!("± {}", pm.text.trim())
+                    } else {
+                        format!("± {}\u{a0}{}", pm.text.trim(), unit.symbol)
+                    }
+                });
+            rows.push(FiledReading {
+                key: key.to_owned(),
+                name: format!("{}, {}", section.title, item.label.to_lowercase()),
+                text: entry.text.trim().to_owned(),
+                unit: unit.to_owned(),
+                quantity: reading.amount.kind().id().to_owned(),
+                si: reading.amount.si(),
+                half_width_si: reading.half_width_si,
+                plus_minus,
+            });
+        }
+    }
+    // What the form no longer asks for (another humidity was picked) was not part of the result.
+    typed.readings.retain(|key, _| rows.iter().any(|row| row.key == *key));
+    Ok((typed, rows))
+}
+
+/// Files a check; the commit has returned when this does.
+pub(crate) fn file(at: &mut Asked<'_>, draft: Option<String>, kept: Kept) -> Result<Reply, Fault> {
+    let Some(site) = kept.place.site.clone() else {
+        return Err(Fault::at(
+            "site",
+            "Say at which site this was read. A site can be added on the spot.",
+        ));
+    };
+    let about = check(&kept.check)?.about();
+    let site_head = at.state.ledger.head(RecordId::Site(site_id(&site)?))?;
+    let around = places::around(at, &kept.place, &kept.check, kept.corrects.as_deref())?;
+    let (typed, readings) = readings(&kept, &at.state.units)?;
+    let worked = work(check(&kept.check)?, &typed, &around, &at.state.units);
+    let answer = worked
+        .answer
+        .filter(|answer| answer.headline().is_some_and(|figure| figure.value.is_some()));
+    let Some(answer) = answer else {
+        let why =
+            worked.solved.headline.why_not.unwrap_or_else(|| "it has no result yet".to_owned());
+        return Err(Fault::new(FaultCode::NotSolved, format!("Nothing to file yet: {why}.")));
+    };
+    let visit = match &kept.place.visit {
+        Some(visit) => Some(visit_id(visit)?),
+        None => visits::today(at, site_id(&site)?)?.as_deref().map(visit_id).transpose()?,
+    };
+    let results = answer
+        .figures
+        .iter()
+        .filter_map(|figure| {
+            let value = figure.value.as_ref()?;
+            Some(LedgerRow {
+                key: figure.key.clone(),
+                quantity: value.quantity.clone(),
+                si: value.si,
+                half_width_si: figure.half_width_si,
+            })
+        })
+        .collect();
+    let text = json(&FiledBody { check: kept.check.clone(), typed, readings, answer })?;
+    let body = Body {
+        site: Some(site_id(&site)?),
+        equipment: kept.place.equipment.as_deref().map(equipment_id).transpose()?,
+        visit,
+        title: about.label.to_owned(),
+        invented: site_head.body.invented,
+        app_version: VERSION.to_owned(),
+        text,
+        results,
+    };
+    let from = draft.as_deref().map(draft_id).transpose()?;
+    let revision = match &kept.corrects {
+        None => at.state.ledger.file(Kind::Entry, at.now, &body, from)?,
+        Some(entry) => {
+            let head = at.state.ledger.head(record(entry)?)?;
+            at.state.ledger.revise(&head, at.now, &body, from)?
+        }
+    };
+    Ok(Reply::Filed(Filed {
+        entry: revision.record.to_string(),
+        says: format!("Filed {}", clock::time(at.now)),
+        place: places::in_words(at, &kept.place)?,
+    }))
+}
+
+/// Opens a filed entry's readings as a form.
+pub(crate) fn correct(at: &Asked<'_>, entry: &str) -> Result<Reply, Fault> {
+    let head = at.state.ledger.head(record(entry)?)?;
+    let filed = filed(&head).ok_or_else(|| Fault::not_found("What was typed then"))?;
+    let kept = Kept {
+        check: filed.check,
+        typed: filed.typed,
+        place: place_of(&head.body),
+        corrects: Some(entry.to_owned()),
+    };
+    drafts::opened(at, None, kept)
+}
+
+pub(crate) fn withdraw(at: &mut Asked<'_>, entry: &str, withdrawn: bool) -> Result<Reply, Fault> {
+    let head = at.state.ledger.head(record(entry)?)?;
+    if head.withdrawn != withdrawn {
+        at.state.ledger.withdraw(&head, at.now, withdrawn)?;
+    }
+    let says = if withdrawn { "Withdrawn; it stays in the history" } else { "Brought back" };
+    Ok(Reply::Done { says: says.to_owned() })
+}
+
+/// Entries in a list, newest first.
+pub(crate) fn rows(at: &Asked<'_>, within: Within, most: usize) -> Result<Vec<EntryRow>, Fault> {
+    let heads = at.state.ledger.list(Kind::Entry, within)?;
+    let mut rows: Vec<EntryRow> = Vec::new();
+    for head in heads.into_iter().take(most) {
+        // Two corrections made apart are one entry in a list; its page shows both.
+        if rows.last().is_some_and(|row| row.entry == head.record.to_string()) {
+            continue;
+        }
+        let when = clock::day(head.at, at.now);
+        let mut place = place_of(&head.body);
+        if matches!(within, Within::Site(_) | Within::Visit(_)) {
+            place.site = None;
+        }
+        if matches!(within, Within::Equipment(_)) {
+            place = Place::default();
+        }
+        let words = places::in_words(at, &place)?;
+        rows.push(EntryRow {
+            entry: head.record.to_string(),
+            label: head.body.title.clone(),
+            says: if words.is_empty() { when } else { format!("{words}, {when}") },
+            figure: filed(&head)
+                .map(|filed| result_view::in_a_line(&filed.answer, &at.state.units))
+                .unwrap_or_default(),
+            withdrawn: head.withdrawn,
+            invented: head.body.invented,
+        });
+    }
+    Ok(rows)
+}
+
+/// A filed entry as it was filed, in today's units.
+pub(crate) fn entry(at: &Asked<'_>, entry: &str) -> Result<Reply, Fault> {
+    let record = record(entry)?;
+    let heads = at.state.ledger.heads(record)?;
+    let Some(head) = heads.first() else { return Err(Fault::not_found("That entry")) };
+    let Some(filed) = filed(head) else {
+        return Err(Fault::new(
+            FaultCode::NotFound,
+            "This entry was filed by another version and cannot be shown.",
+        ));
+    };
+    let units = &at.state.units;
+    let place = place_of(&head.body);
+    let words = places::in_words(at, &place)?;
+    let pressure =
+        filed.answer.pressure.as_ref().map(|pressure| format!("Air at {}", pressure.say(units)));
+    let solved = Solved {
+        check: check(&filed.check)
+            .map(check_name)
+            .unwrap_or_else(|_| unknown(&filed.check, &head.body.title)),
+        subtitle: [Some(words.clone()).filter(|words| !words.is_empty()), pressure]
+            .into_iter()
+            .flatten()
+            .collect::<Vec<_>>()
+            .join(". "),
+        invented: head.body.invented,
+        sections: Vec::new(),
+        stage: if filed.answer.waits.is_empty() { Stage::Solved } else { Stage::Waiting },
+        waits: None,
+        headline: result_view::headline(&filed.answer, None, units),
+        groups: result_view::groups(&filed.answer, units),
+        versus: result_view::versus(&filed.answer, units),
+        drivers: result_view::drivers(&filed.answer, units),
+        notes: result_view::notes(&filed.answer, &filed.typed.accepted, units),
+        cautions: result_view::cautions(&filed.answer),
+        working: result_view::working(&filed.answer, units),
+        states: result_view::states(&filed.answer, units),
+    };
+    let history = at.state.ledger.history(record)?;
+    let first = history.first().map_or(head.at, |revision| revision.at);
+    let mut says = format!("Filed {} by version {}", clock::time(head.at), head.body.app_version);
+    if history.len() > 1 {
+        says = format!(
+            "Filed {}, revised {} by version {}",
+            clock::time(first),
+            clock::time(head.at),
+            head.body.app_version
+        );
+    }
+    Ok(Reply::Entry(Box::new(EntryView {
+        entry: entry.to_owned(),
+        says: if words.is_empty() {
+            clock::full_day(first)
+        } else {
+            format!("{words}, {}", clock::full_day(first))
+        },
+        place,
+        filed: says,
+        invented: head.body.invented,
+        withdrawn: head.withdrawn,
+        readings: filed.readings.iter().map(reading_row).collect(),
+        revisions: revisions(&history, &heads, units),
+        solved,
+    })))
+}
+
+fn unknown(id: &str, label: &str) -> crate::reply::CheckName {
+    crate::reply::CheckName {
+        id: id.to_owned(),
+        label: label.to_owned(),
+        question: String::new(),
+        takes: String::new(),
+        group: String::new(),
+    }
+}
+
+fn reading_row(reading: &FiledReading) -> ReadingRow {
+    let symbol = Unit::find(&reading.unit).map_or("", |unit| unit.symbol);
+    // A unit typed with the number is part of the text already.
+    let typed_with_unit =
+        reading.text.ends_with(|c: char| c.is_alphabetic() || matches!(c, '%' | '°' | '²' | '³'));
+    let text = if typed_with_unit || symbol.is_empty() {
+        reading.text.clone()
+    } else {
+        format!("{}\u{a0}{symbol}", reading.text)
+    };
+    ReadingRow {
+        label: reading.name.clone(),
+        text,
+        plus_minus: reading.plus_minus.clone().unwrap_or_else(|| "± not\u{a0}known".to_owned()),
+    }
+}
+
+fn revisions(history: &[Head], heads: &[Head], units: &UnitChoice) -> Vec<RevisionRow> {
+    history
+        .iter()
+        .enumerate()
+        .map(|(index, revision)| {
+            let what = if revision.withdrawn {
+                "withdrawn"
+            } else if index == 0 {
+                "first"
+            } else if history[..index]
+                .iter()
+                .any(|before| Some(before.id) == revision.parent && before.withdrawn)
+            {
+                "brought back"
+            } else {
+                "corrected"
+            };
+            RevisionRow {
+                says: format!(
+                    "{}, {}, {what}",
+                    clock::full_day(revision.at),
+                    clock::time(revision.at)
+                ),
+                figure: filed(revision)
+                    .map(|filed| result_view::in_a_line(&filed.answer, units))
+                    .unwrap_or_default(),
+                current: heads.iter().any(|head| head.id == revision.id),
+            }
+        })
+        .collect()
+}

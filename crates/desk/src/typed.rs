@@ -1,0 +1,137 @@
+//! From what was typed to what a check is given: each text is read once, here.
+
+use std::collections::BTreeMap;
+
+use dewledger_checks::form::{Item, ReadingItem, Section};
+use dewledger_checks::{Check, Given, Reading};
+use dewledger_quantities::{Entry, PlusMinus, Unit, UnitChoice, read, read_plus_minus, show};
+
+use crate::request::{Typed, TypedReading};
+
+/// What was typed, read: what a check is given, and what could not be read.
+pub(crate) struct Readout {
+    pub(crate) given: Given,
+    pub(crate) sections: Vec<Section>,
+    /// Why a text is no number, by key of the reading.
+    pub(crate) errors: BTreeMap<String, String>,
+    /// "read as 17.1", by key of the reading.
+    pub(crate) echoes: BTreeMap<String, String>,
+}
+
+/// Asks of a form, which may change with what is given: the check's own, or the visit's.
+pub(crate) type Form<'a> = dyn Fn(&Given) -> Vec<Section> + 'a;
+
+/// Reads a check's form.
+pub(crate) fn read_check(check: &dyn Check, typed: &Typed, units: &UnitChoice) -> Readout {
+    read_form(&|given| check.form(given), typed, units)
+}
+
+/// Reads any form. Kinds of readings depend on choices and on other readings, so a second pass follows the first.
+pub(crate) fn read_form(form: &Form<'_>, typed: &Typed, units: &UnitChoice) -> Readout {
+    let mut given = Given::default();
+    for (key, value) in &typed.choices {
+        given.choose(key, value);
+    }
+    let mut readout = pass(form(&given), &given, typed, units);
+    let sections = form(&readout.given);
+    if sections != readout.sections {
+        readout = pass(sections, &given, typed, units);
+        readout.sections = form(&readout.given);
+    }
+    readout
+}
+
+fn pass(sections: Vec<Section>, choices: &Given, typed: &Typed, units: &UnitChoice) -> Readout {
+    let mut given = choices.clone();
+    let (mut errors, mut echoes) = (BTreeMap::new(), BTreeMap::new());
+    for section in &sections {
+        for item in &section.items {
+            let Item::Reading(item) = item else { continue };
+            let Some(reading) = typed.readings.get(item.key.as_ref()) else { continue };
+            match read_one(item, reading, units) {
+                Ok(Some((reading, echo))) => {
+                    given.put(item.key.as_ref(), reading);
+                    if let Some(echo) = echo {
+                        echoes.insert(item.key.to_string(), echo);
+                    }
+                }
+                Ok(None) => {}
+                Err(says) => {
+                    errors.insert(item.key.to_string(), says);
+                }
+            }
+        }
+    }
+    Readout { given, sections, errors, echoes }
+}
+
+/// The unit that a reading is typed in: its own, else the one chosen for its quantity.
+pub(crate) fn unit_of(
+    item: &ReadingItem,
+    reading: Option<&TypedReading>,
+    units: &UnitChoice,
+) -> &'static Unit {
+    reading
+        .and_then(|reading| reading.unit.as_deref())
+        .and_then(Unit::find)
+        .filter(|unit| unit.measures(item.kind))
+        .unwrap_or_else(|| units.get(item.kind))
+}
+
+/// The unit that a ± is typed in: its own, else the difference of the reading's unit, else the one chosen.
+pub(crate) fn plus_minus_unit(
+    item: &ReadingItem,
+    reading: Option<&TypedReading>,
+    units: &UnitChoice,
+) -> &'static Unit {
+    let difference = item.kind.difference();
+    let own = reading
+        .and_then(|reading| reading.plus_minus.as_ref())
+        .and_then(|plus_minus| plus_minus.unit.as_deref())
+        .and_then(Unit::find)
+        .filter(|unit| unit.measures(difference));
+    own.unwrap_or_else(|| {
+        let unit = unit_of(item, reading, units);
+        if unit.measures(difference) {
+            return unit;
+        }
+        match unit.id {
+            "degF" => Unit::find("degF_difference"),
+            "degC" => Unit::find("K"),
+            _ => None,
+        }
+        .unwrap_or_else(|| units.get(difference))
+    })
+}
+
+type One = Option<(Reading, Option<String>)>;
+
+fn read_one(item: &ReadingItem, typed: &TypedReading, units: &UnitChoice) -> Result<One, String> {
+    let unit = unit_of(item, Some(typed), units);
+    let number = match read(item.kind, &typed.text, unit).map_err(|error| error.to_string())? {
+        Entry::NotRead => return Ok(None),
+        Entry::Read(number) => number,
+    };
+    let mut reading =
+        Reading { amount: number.amount, unit: Some(number.unit), half_width_si: None };
+    if let Some(plus_minus) = &typed.plus_minus {
+        let unit = plus_minus_unit(item, Some(typed), units);
+        reading.half_width_si = match read_plus_minus(item.kind, &plus_minus.text, unit) {
+            Ok(None) => None,
+            Ok(Some(PlusMinus::Absolute(half_width))) => Some(half_width),
+            Ok(Some(PlusMinus::Relative(share))) if item.kind.difference() == item.kind => {
+                Some(share * number.amount.si().abs())
+            }
+            Ok(Some(PlusMinus::Relative(_))) => {
+                return Err(
+                    "A ± in per cent depends on the zero of this scale. Type it as a difference."
+                        .to_owned(),
+                );
+            }
+            Err(error) => return Err(format!("The ±: {error}")),
+        };
+    }
+    let echo = (number.comma || number.unit_typed)
+        .then(|| format!("read as {}", show(number.amount, number.unit).text()));
+    Ok(Some((reading, echo)))
+}
