@@ -54,6 +54,15 @@ const PRESETS: &[(Kind, &str, &str)] = &[
     (Kind::LatentConstant, "Btu/h.cfm.(lb/lb)", "W/(L/s).(g/kg)"),
 ];
 
+/// A choice of all units at once.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Preset {
+    /// Inch-pound units.
+    Ip,
+    /// SI units.
+    Si,
+}
+
 /// The unit cannot measure the quantity.
 #[derive(Debug, Clone, PartialEq, Eq, thiserror::Error)]
 #[error("{unit} does not measure {kind}")]
@@ -68,18 +77,35 @@ impl UnitChoice {
     /// Inch-pound units.
     #[must_use]
     pub fn ip() -> Self {
-        Self::preset(|(_, ip, _)| ip)
+        Self::of(Preset::Ip)
     }
 
     /// SI units.
     #[must_use]
     pub fn si() -> Self {
-        Self::preset(|(_, _, si)| si)
+        Self::of(Preset::Si)
     }
 
-    fn preset(of: impl Fn(&(Kind, &'static str, &'static str)) -> &'static str) -> Self {
-        let units = PRESETS.iter().filter_map(|row| Some((row.0, Unit::find(of(row))?))).collect();
+    /// The units of a preset.
+    #[must_use]
+    pub fn of(preset: Preset) -> Self {
+        let units = PRESETS
+            .iter()
+            .filter_map(|(kind, ip, si)| {
+                let id = match preset {
+                    Preset::Ip => ip,
+                    Preset::Si => si,
+                };
+                Some((*kind, Unit::find(id)?))
+            })
+            .collect();
         Self { units }
+    }
+
+    /// The preset that this choice is, unless units were chosen quantity by quantity.
+    #[must_use]
+    pub fn preset(&self) -> Option<Preset> {
+        [Preset::Ip, Preset::Si].into_iter().find(|preset| *self == Self::of(*preset))
     }
 
     /// The unit of a kind.
@@ -131,6 +157,12 @@ mod tests {
             (choice.get(Kind::AirFlow).id, choice.get(Kind::Temperature).id),
             ("cfm", "degC")
         );
-        assert!(choice.set(Kind::AirFlow, Unit::find("degC").unwrap()).is_err());
+        assert_eq!(choice.preset(), None);
+        choice.set(Kind::AirFlow, Unit::find("L/s").unwrap()).unwrap();
+        assert_eq!(choice.preset(), Some(Preset::Si));
+        assert_eq!(UnitChoice::ip().preset(), Some(Preset::Ip));
+        let refused = choice.set(Kind::AirFlow, Unit::find("degC").unwrap()).unwrap_err();
+        assert_eq!(refused.to_string(), "degC does not measure air flow, actual");
+        assert_eq!(choice.preset(), Some(Preset::Si));
     }
 }

@@ -5,7 +5,10 @@
 
 mod amount;
 mod choice;
+mod decimal;
 mod kind;
+mod number;
+mod plus_minus;
 mod quantity;
 mod read;
 mod sentence;
@@ -13,15 +16,16 @@ mod show;
 mod unit;
 
 pub use amount::Amount;
-pub use choice::{UnitChoice, WrongUnit};
+pub use choice::{Preset, UnitChoice, WrongUnit};
 pub use kind::Kind;
+pub use plus_minus::{PlusMinus, read_plus_minus};
 pub use quantity::{
     AirFlow, CondensateFlow, DryAirFlow, Elevation, Enthalpy, EnthalpyDifference, HumidityRatio,
     HumidityRatioDifference, LatentConstant, Mass, MoistureFlow, MoleFraction, PressureDifference,
     ProcessSlope, Quantity, RelativeHumidity, RoomVolume, SensibleConstant, Share, StandardAirFlow,
     TotalConstant, VapourPressure, WaterEnthalpy, WaterFlow, WaterVolume, difference,
 };
-pub use read::{Entry, PlusMinus, ReadError, Typed, read, read_plus_minus};
+pub use read::{Entry, ReadError, Typed, read};
 pub use sentence::Sentence;
 pub use show::{Shown, plain, show, show_with};
 pub use unit::Unit;

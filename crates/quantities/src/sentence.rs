@@ -77,11 +77,11 @@ impl Sentence {
     pub fn say(&self, units: &UnitChoice) -> String {
         let mut said = String::new();
         let mut rest: &str = &self.template;
-        while let Some(open) = rest.find('{') {
-            said.push_str(&rest[..open]);
-            let Some(close) = rest[open..].find('}').map(|at| open + at) else { break };
-            said.push_str(&self.fill(&rest[open + 1..close], units));
-            rest = &rest[close + 1..];
+        while let Some((before, behind)) = rest.split_once('{') {
+            let Some((name, after)) = behind.split_once('}') else { break };
+            said.push_str(before);
+            said.push_str(&self.fill(name, units));
+            rest = after;
         }
         said.push_str(rest);
         capital(&said)

@@ -3,12 +3,13 @@
 //! A true minus (U+2212), no-break spaces before the unit and in thousands. With a ±: two significant digits of
 //! the ±, the value to the same place, rounding half up, one decimal fewer after a carry.
 
-use crate::{Amount, Unit};
+use crate::decimal::Decimal;
+use crate::{Amount, Kind, Unit};
 
 /// A value as shown.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Shown {
-    /// The number.
+    /// The number; a dash where there is none.
     pub number: String,
     /// Its unit.
     pub unit: &'static Unit,
@@ -26,105 +27,116 @@ impl Shown {
     }
 }
 
-/// Shows a value to what a field instrument resolves, with at least three significant digits.
+/// Shows a value to what a field instrument resolves, and small values to three significant digits as far as three more
+/// decimals give them (differences and shares: two digits, two more decimals). A value that is not a number, or in a
+/// unit that does not measure it, is a dash.
+///
+/// # Example
+///
+/// ```
+/// use dewledger_quantities::{Amount, Kind, Unit, show};
+///
+/// let shown = show(Amount::new(Kind::Temperature, 263.15), Unit::find("degC").expect("in the table"));
+/// assert_eq!(shown.text(), "−10.0\u{a0}°C");
+/// ```
 #[must_use]
 pub fn show(amount: Amount, unit: &'static Unit) -> Shown {
     let value = unit.from_si(amount.kind(), amount.si()).unwrap_or(f64::NAN);
-    Shown { number: number(value, decimals(amount, unit, value)), unit }
+    Shown { number: number(value, decimals(amount.kind(), unit, value)), unit }
 }
 
-/// Shows a value with the half-width of its interval, both rounded to two digits of the half-width.
+/// Shows a value with the half-width of its interval, both rounded to two digits of the half-width. The half-width
+/// converts as a difference, without the scale's zero. Without one (zero, negative or not a number) the second text is
+/// "not known", never ± 0.
 #[must_use]
 pub fn show_with(amount: Amount, half_width_si: f64, unit: &'static Unit) -> (Shown, Shown) {
     let value = unit.from_si(amount.kind(), amount.si()).unwrap_or(f64::NAN);
-    let width = unit.width_from_si(amount.kind(), half_width_si).unwrap_or(f64::NAN).abs();
-    if !(width.is_finite() && width > 0.0) {
+    let width = unit.width_from_si(amount.kind(), half_width_si).filter(|width| *width > 0.0);
+    let Some(exact) = width.and_then(Decimal::of).filter(|exact| exact.exponent() > -LAST_PLACE)
+    else {
         return (show(amount, unit), Shown { number: "not\u{a0}known".to_owned(), unit });
-    }
-    let mut place = 1 - exponent(width);
+    };
+    let mut place = 1 - exact.exponent();
     // 0.0996 rounds to 0.10, one place fewer.
-    if exponent(rounded(width, place)) > exponent(width) {
+    if exact.rounded(place).exponent() > exact.exponent() {
         place -= 1;
     }
-    let shown = |value: f64| Shown { number: at_place(value, place), unit };
-    (shown(value), shown(width))
+    let half_width = Shown { number: exact.rounded(place).text(place), unit };
+    (Shown { number: number(value, place), unit }, half_width)
 }
 
-/// The shortest text that reads back to the same number, for files and programs: ASCII, never rounded.
+/// No decimal is shown behind this one: a ± below it is no ±.
+const LAST_PLACE: i32 = 18;
+
+/// The shortest text that reads back to the same number, for files and programs: ASCII, never rounded. Empty where
+/// there is no number.
 #[must_use]
 pub fn plain(amount: Amount, unit: &Unit) -> String {
-    unit.from_si(amount.kind(), amount.si()).map_or_else(String::new, |value| format!("{value}"))
+    unit.from_si(amount.kind(), amount.si())
+        .filter(|value| value.is_finite())
+        // Adding zero takes the sign off a zero.
+        .map_or_else(String::new, |value| format!("{}", value + 0.0))
 }
 
-/// Decimals of the table, more where the value is small, none where it is large.
-fn decimals(amount: Amount, unit: &Unit, value: f64) -> i32 {
-    let table = i32::from(unit.decimals(amount.kind()));
-    if !value.is_finite() || value == 0.0 {
-        return table;
+/// Decimals of the table, and more where the value is small.
+fn decimals(kind: Kind, unit: &Unit, value: f64) -> i32 {
+    let table = i32::from(unit.decimals(kind));
+    let Some(exact) = Decimal::of(value).filter(|exact| !exact.is_zero()) else { return table };
+    let (digits, more) = match smallness(kind) {
+        Smallness::Place => return table,
+        Smallness::Hint => (2, 2),
+        Smallness::Digits => (3, 3),
+    };
+    let wanted = (digits - 1 - exact.exponent()).clamp(table, table + more);
+    // What is zero even so is noise: it gets no more zeros than others.
+    if exact.rounded(wanted).is_zero() { table } else { wanted }
+}
+
+/// What a small value of a kind means.
+enum Smallness {
+    /// Nothing: the zero is a place on a scale, the instrument resolves there what it does elsewhere.
+    Place,
+    /// Near to the other: a hint of its size is enough.
+    Hint,
+    /// Little of it: it has three digits like much of it.
+    Digits,
+}
+
+fn smallness(kind: Kind) -> Smallness {
+    if matches!(
+        kind,
+        Kind::Temperature
+            | Kind::RelativeHumidity
+            | Kind::Enthalpy
+            | Kind::WaterEnthalpy
+            | Kind::Elevation
+    ) {
+        Smallness::Place
+    } else if matches!(
+        kind,
+        Kind::TemperatureDifference
+            | Kind::EnthalpyDifference
+            | Kind::HumidityRatioDifference
+            | Kind::Share
+            | Kind::Ratio
+    ) {
+        Smallness::Hint
+    } else {
+        Smallness::Digits
     }
-    let magnitude = exponent(value.abs());
-    // Three significant digits at least for what is small, four at least for powers and flows in large units.
-    let wanted = if table == 0 { 2 - magnitude } else { (2 - magnitude).min(table + 3) };
-    let temperature_like = matches!(
-        amount.kind(),
-        crate::Kind::Temperature
-            | crate::Kind::TemperatureDifference
-            | crate::Kind::RelativeHumidity
-            | crate::Kind::Share
-            | crate::Kind::Enthalpy
-            | crate::Kind::EnthalpyDifference
-            | crate::Kind::Ratio
-    );
-    if temperature_like { table } else { table.max(wanted.min(table + 3)) }
 }
 
-/// The power of ten of the first significant digit.
-fn exponent(value: f64) -> i32 {
-    // The text form is exact where a logarithm can be off by one at powers of ten.
-    let text = format!("{value:e}");
-    text.split_once('e').and_then(|(_, exponent)| exponent.parse().ok()).unwrap_or(0)
-}
-
-fn rounded(value: f64, place: i32) -> f64 {
-    let scale = 10_f64.powi(place);
-    (value * scale + 0.5 * value.signum() * 1e-12).round() / scale
-}
-
-/// With so many decimals; below zero, rounded to tens and more.
-fn at_place(value: f64, place: i32) -> String {
-    if place >= 0 { number(value, place) } else { number(rounded(value, place), 0) }
-}
-
-/// A number with decimals, a true minus, thousands parted, no minus before a zero.
-fn number(value: f64, decimals: i32) -> String {
-    if !value.is_finite() {
-        return "–".to_owned();
-    }
-    let decimals = usize::try_from(decimals.clamp(0, 12)).unwrap_or(0);
-    // Half up in decimal, where the binary value of a typed 0.125 stands a hair below.
-    let magnitude = value.abs() * (1.0 + 4.0 * f64::EPSILON);
-    let text = format!("{magnitude:.decimals$}");
-    let (whole, fraction) =
-        text.split_once('.').map_or((text.as_str(), None), |(w, f)| (w, Some(f)));
-    let mut grouped = String::new();
-    for (at, digit) in whole.chars().enumerate() {
-        if whole.len() > 4 && at > 0 && (whole.len() - at).is_multiple_of(3) {
-            grouped.push('\u{a0}');
-        }
-        grouped.push(digit);
-    }
-    if let Some(fraction) = fraction {
-        grouped.push('.');
-        grouped.push_str(fraction);
-    }
-    let zero = !text.chars().any(|c| matches!(c, '1'..='9'));
-    if value < 0.0 && !zero { format!("−{grouped}") } else { grouped }
+/// A number to a place, a true minus, thousands parted, no minus before a zero, a dash where there is none.
+fn number(value: f64, place: i32) -> String {
+    let Some(exact) = Decimal::of(value) else { return "–".to_owned() };
+    let rounded = exact.rounded(place);
+    let sign = if value < 0.0 && !rounded.is_zero() { "−" } else { "" };
+    format!("{sign}{}", rounded.text(place))
 }
 
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::Kind;
 
     fn unit(id: &str) -> &'static Unit {
         Unit::find(id).unwrap()
@@ -138,12 +150,30 @@ mod tests {
             (0.689_22, 0.0996, "0.69", "0.10"),
             (12.8, 0.0951, "12.800", "0.095"),
             (1.0, 0.009_95, "1.000", "0.010"),
+            (48_700.0, 9960.0, "49\u{a0}000", "10\u{a0}000"),
             (-3.26, 0.31, "−3.26", "0.31"),
+            (0.001, 5.0, "0.0", "5.0"),
+            (-0.04, 5.0, "0.0", "5.0"),
+            (100.0, 0.105, "100.00", "0.11"),
+            (12_345_678.0, 99.5, "12\u{a0}345\u{a0}680", "100"),
         ];
         for (value, width, shown, plus_minus) in cases {
             let (a, b) = show_with(Amount::new(Kind::Ratio, value), width, unit("1"));
             assert_eq!((a.number.as_str(), b.number.as_str()), (shown, plus_minus));
         }
+    }
+
+    #[test]
+    fn a_plus_minus_is_never_zero() {
+        for width in [0.0, -1.0, f64::NAN, f64::INFINITY, 1e-19] {
+            let (value, plus_minus) = show_with(Amount::new(Kind::Power, 1000.0), width, unit("W"));
+            assert_eq!(
+                (value.number.as_str(), plus_minus.number.as_str()),
+                ("1000", "not\u{a0}known")
+            );
+        }
+        let (_, least) = show_with(Amount::new(Kind::Ratio, 0.0), 1e-15, unit("1"));
+        assert_eq!(least.number, "0.0000000000000010");
     }
 
     #[test]
@@ -166,10 +196,36 @@ mod tests {
             (Kind::Elevation, 1609.344, "ft", "5280\u{a0}ft"),
             (Kind::RelativeHumidity, 0.5, "%", "50.0\u{a0}%"),
             (Kind::Temperature, 273.149_999, "degC", "0.0\u{a0}°C"),
+            (Kind::Power, 35_168.528, "ton", "10.00\u{a0}refrigeration tons"),
         ];
         for (kind, si, id, text) in cases {
             assert_eq!(show(Amount::new(kind, si), unit(id)).text(), text);
         }
+    }
+
+    #[test]
+    fn small_values_keep_digits_and_noise_does_not() {
+        let cases = [
+            (Kind::Power, 52.3, "kW", "0.0523\u{a0}kW"),
+            (Kind::AirFlow, 0.0025, "cfm", "5.30\u{a0}cfm"),
+            (Kind::HumidityRatio, 0.000_34, "g/kg", "0.340\u{a0}g/kg"),
+            (Kind::Ratio, 0.0523, "1", "0.052"),
+            (Kind::TemperatureDifference, 0.04, "K", "0.040\u{a0}K"),
+            (Kind::TemperatureDifference, 3e-14, "K", "0.0\u{a0}K"),
+            (Kind::Power, -1e-9, "kW", "0.0\u{a0}kW"),
+            // On a scale the zero is a place like any other.
+            (Kind::Temperature, 273.19, "degC", "0.0\u{a0}°C"),
+        ];
+        for (kind, si, id, text) in cases {
+            assert_eq!(show(Amount::new(kind, si), unit(id)).text(), text);
+        }
+    }
+
+    #[test]
+    fn no_number_is_a_dash() {
+        assert_eq!(show(Amount::new(Kind::Power, f64::NAN), unit("kW")).number, "–");
+        assert_eq!(show(Amount::new(Kind::Power, 1.0), unit("degC")).number, "–");
+        assert_eq!(plain(Amount::new(Kind::Power, f64::INFINITY), unit("kW")), "");
     }
 
     #[test]
@@ -178,5 +234,6 @@ mod tests {
             let text = plain(Amount::new(Kind::PressureDifference, value), unit("Pa"));
             assert_eq!(text.parse::<f64>().unwrap().to_bits(), value.to_bits());
         }
+        assert_eq!(plain(Amount::new(Kind::PressureDifference, -0.0), unit("Pa")), "0");
     }
 }
