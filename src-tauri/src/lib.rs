@@ -8,6 +8,7 @@ mod opened;
 
 use std::path::PathBuf;
 
+use dewledger_desk::Clock;
 use tauri::webview::NewWindowResponse;
 use tauri::{App, AppHandle, Manager, RunEvent, State, WebviewWindowBuilder, WindowEvent};
 
@@ -47,7 +48,7 @@ pub fn run() {
 }
 
 fn set_up(app: &App) -> tauri::Result<()> {
-    app.manage(Opened::at(&ledger_place(app)?, now));
+    app.manage(Opened::at(&ledger_place(app)?, clock()));
     for window in &app.config().app.windows {
         WebviewWindowBuilder::from_config(app, window)?
             .on_navigation(door::is_own)
@@ -85,6 +86,6 @@ fn goes_out_of_sight(event: &WindowEvent) -> bool {
 }
 
 #[expect(clippy::disallowed_methods, reason = "the one place where the window reads the clock")]
-fn now() -> jiff::ZonedDateTime {
-    jiff::ZonedDateTime::now()
+fn clock() -> Clock {
+    Clock::new(jiff::ZonedDateTime::now)
 }
