@@ -1,0 +1,71 @@
+// The checks, by what a person wants to know.
+
+import { ask } from '../api.js';
+import { h } from '../lib/dom.js';
+import { icon } from '../lib/icons.js';
+import { address, placeOf } from '../lib/route.js';
+import { Screen } from '../lib/screen.js';
+import { linkRow, listSection } from '../parts/rows.js';
+
+export class Checks extends Screen {
+  /** @type {Desk.CheckName[]} */
+  #checks = [];
+  #wanted = '';
+
+  async load() {
+    this.#checks = (await ask({ ask: 'checks' }, 'checks')).checks;
+  }
+
+  draw() {
+    const words = this.#wanted.toLowerCase().split(/\s+/).filter(Boolean);
+    const found = this.#checks.filter((check) => {
+      const text = `${check.label} ${check.question} ${check.takes} ${check.group}`.toLowerCase();
+      return words.every((word) => text.includes(word));
+    });
+    const groups = [...new Set(found.map((check) => check.group))];
+    const place = placeOf(this.route);
+    return this.frame(
+      { title: 'What do you want to know?', root: true, where: `${this.#checks.length} checks` },
+      h(
+        'div',
+        { class: 'field find' },
+        h('label', { class: 'label', for: 'find-check' }, 'Find a check'),
+        h(
+          'div',
+          { class: 'entry words' },
+          h('span', { class: 'lens' }, icon('find')),
+          h('input', {
+            id: 'find-check',
+            type: 'search',
+            enterkeyhint: 'search',
+            autocomplete: 'off',
+            value: this.#wanted,
+            oninput: (/** @type {Event} */ event) => {
+              this.#wanted = /** @type {HTMLInputElement} */ (event.target).value;
+              this.render();
+            },
+          }),
+        ),
+      ),
+      h('p', { class: 'sr', role: 'status' }, words.length > 0 ? `${found.length} found` : ''),
+      found.length === 0 &&
+        words.length > 0 &&
+        h('p', { class: 'gap' }, 'No check has all of these words. Fewer words find more.'),
+      groups.map((group) =>
+        listSection(
+          group,
+          found
+            .filter((check) => check.group === group)
+            .map((check) =>
+              linkRow({
+                key: check.id,
+                href: address(['check', check.id], { ...place }),
+                title: check.question,
+                says: [h('b', null, check.label), `. ${check.takes}`],
+              }),
+            ),
+        ),
+      ),
+    );
+  }
+}
