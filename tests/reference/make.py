@@ -57,7 +57,7 @@ def process(a, b, m, water=None):
     latent = 0.5 * ((other - a["h"]) + (b["h"] - one))
     total, dw = b["h"] - a["h"], b["w"] - a["w"]
     out = {"total": [m * total, 2e-5, 0.5], "sensible": [m * sensible, 2e-5, 0.5], "latent": [m * latent, 1e-4, 0.5],
-           "moisture": [m * dw, 1e-4, 0], "dry_air": [m, 2e-6, 0], "delta_h": [total, 2e-5, 0.1]}
+           "moisture": [m * dw, 1e-4, 1e-8], "dry_air": [m, 2e-6, 0], "delta_h": [total, 2e-5, 0.1]}
     if water is not None:
         out["duty"] = [m * (total - dw * water), 2e-5, 0.5]
     return out
