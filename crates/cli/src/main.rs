@@ -41,10 +41,12 @@ enum Command {
         /// Lists the checks.
         #[arg(long)]
         list: bool,
-        /// The check, as air_heat. Without it requests are read from standard input.
+        #[arg(help = "The check, as air_heat; without it requests are read from standard input")]
         check: Option<String>,
-        /// Readings and choices, as entering.dry_bulb="80 F ± 0.5" or flow.basis=standard.
-        #[arg(value_name = "FIELD=VALUE")]
+        #[arg(
+            value_name = "FIELD=VALUE",
+            help = "Readings and choices, as entering.dry_bulb=\"80 F ± 0.5\" or flow.basis=standard"
+        )]
         fields: Vec<String>,
         /// Units of the answer.
         #[arg(long, value_enum, default_value_t = check::Units::Si)]

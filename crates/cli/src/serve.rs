@@ -2,13 +2,14 @@
 //!
 //! 127.0.0.1 only, with a key that cannot be guessed. The files are those of `ui/`, carried in the program.
 
-use std::io::{Cursor, Read, Write};
+use std::borrow::Cow;
+use std::io::{self, Read, Write};
 use std::path::PathBuf;
 use std::process::ExitCode;
 use std::sync::Arc;
 
 use dewledger_desk::{Desk, FaultCode, fault_json};
-use tiny_http::{Header, Method, Request, Response, Server};
+use tiny_http::{Method, Request, Server};
 
 use crate::clock;
 use crate::guard::{Key, for_this_host, from_own_page};
@@ -107,13 +108,44 @@ struct Shared {
     port: u16,
 }
 
-type Reply = Response<Cursor<Vec<u8>>>;
+/// An answer, written by hand so that every connection is closed behind it: kept open, a browser's six connections
+/// hold as many of the server's threads, and a seventh request can wait for ever.
+struct Reply {
+    status: &'static str,
+    kind: &'static str,
+    body: Cow<'static, [u8]>,
+}
+
+impl Reply {
+    fn send(&self, request: Request) -> io::Result<()> {
+        let head_only = *request.method() == Method::Head;
+        let mut head = format!(
+            "HTTP/1.1 {}\r\nContent-Type: {}\r\nContent-Length: {}\r\nConnection: close\r\n",
+            self.status,
+            self.kind,
+            self.body.len()
+        );
+        for (name, value) in SECURITY {
+            head.push_str(name);
+            head.push_str(": ");
+            head.push_str(value);
+            head.push_str("\r\n");
+        }
+        head.push_str("\r\n");
+        let mut writer = request.into_writer();
+        writer.write_all(head.as_bytes())?;
+        if !head_only {
+            writer.write_all(&self.body)?;
+        }
+        writer.flush()
+    }
+}
 
 impl Shared {
     fn respond(&self, mut request: Request) {
         let reply = self.reply(&mut request);
         // The browser may be gone; nothing is lost by that.
-        let _ = request.respond(reply);
+        let _ = reply.send(request);
     }
 
     fn reply(&self, request: &mut Request) -> Reply {
@@ -127,7 +159,10 @@ impl Shared {
         if !for_this_host(header("Host").as_deref(), self.port)
             || !from_own_page(header("Origin").as_deref(), self.port)
         {
-            return plain(403, "This server answers its own page on this machine only.");
+            return plain(
+                "403 Forbidden",
+                "This server answers its own page on this machine only.",
+            );
         }
         let (key, kind) = (header("X-Dewledger-Token"), header("Content-Type"));
         let path = request.url().split(['?', '#']).next().unwrap_or("/").to_owned();
@@ -135,17 +170,17 @@ impl Shared {
             (Method::Post, "/ask") => {
                 if !self.key.opens(key.as_deref()) {
                     return plain(
-                        403,
+                        "403 Forbidden",
                         "The key is missing or wrong: open the address that the program printed.",
                     );
                 }
                 if !kind.is_some_and(|kind| kind.starts_with("application/json")) {
-                    return plain(415, "A request is JSON.");
+                    return plain("415 Unsupported Media Type", "A request is JSON.");
                 }
-                json(&self.ask(request))
+                json(self.ask(request))
             }
             (Method::Get | Method::Head, path) => file(path),
-            _ => plain(405, "There is nothing here for that."),
+            _ => plain("405 Method Not Allowed", "There is nothing here for that."),
         }
     }
 
@@ -162,28 +197,19 @@ impl Shared {
     }
 }
 
-fn with_headers(mut reply: Reply, content: &str) -> Reply {
-    for (name, value) in [("Content-Type", content)].iter().chain(SECURITY) {
-        if let Ok(header) = Header::from_bytes(*name, *value) {
-            reply.add_header(header);
-        }
-    }
-    reply
+fn plain(status: &'static str, says: &'static str) -> Reply {
+    Reply { status, kind: "text/plain; charset=utf-8", body: Cow::Borrowed(says.as_bytes()) }
 }
 
-fn plain(status: u16, says: &str) -> Reply {
-    with_headers(Response::from_string(says).with_status_code(status), "text/plain; charset=utf-8")
-}
-
-fn json(text: &str) -> Reply {
-    with_headers(Response::from_string(text), "application/json")
+fn json(text: String) -> Reply {
+    Reply { status: "200 OK", kind: "application/json", body: Cow::Owned(text.into_bytes()) }
 }
 
 /// A file of the screens. Only names of the list are served: there is no path to leave the folder by.
 fn file(path: &str) -> Reply {
     let name = if path == "/" { "index.html" } else { path.trim_start_matches('/') };
     let Some((_, content)) = screens::FILES.iter().find(|(file, _)| *file == name) else {
-        return plain(404, "There is no such file.");
+        return plain("404 Not Found", "There is no such file.");
     };
     let kind = match name.rsplit('.').next() {
         Some("html") => "text/html; charset=utf-8",
@@ -194,5 +220,5 @@ fn file(path: &str) -> Reply {
         Some("woff2") => "font/woff2",
         _ => "text/plain; charset=utf-8",
     };
-    with_headers(Response::from_data(*content), kind)
+    Reply { status: "200 OK", kind, body: Cow::Borrowed(content) }
 }
