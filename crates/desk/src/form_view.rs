@@ -294,6 +294,10 @@ impl Draw<'_> {
         let percent = Unit::find("%").filter(|_| item.kind.difference() == item.kind);
         let mut width_units: Vec<&Unit> = Unit::of(item.kind.difference()).collect();
         width_units.extend(percent.filter(|percent| !width_units.contains(percent)));
+        let in_percent = typed
+            .and_then(|typed| typed.plus_minus.as_ref())
+            .is_some_and(|plus_minus| plus_minus.unit.as_deref() == Some("%"));
+        let typed_width_unit = percent.filter(|_| in_percent).unwrap_or(width_unit);
         ReadingView {
             key: key.to_owned(),
             label: item.label.to_string(),
@@ -323,7 +327,7 @@ impl Draw<'_> {
                 .and_then(|typed| typed.plus_minus.as_ref())
                 .map(|plus_minus| plus_minus.text.clone())
                 .unwrap_or_default(),
-            plus_minus_unit: unit_view(width_unit),
+            plus_minus_unit: unit_view(typed_width_unit),
             plus_minus_units: width_units.into_iter().map(unit_view).collect(),
             error: self.error(key),
             unusual,

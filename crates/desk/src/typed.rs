@@ -6,7 +6,7 @@ use dewledger_checks::form::{Item, ReadingItem, Section};
 use dewledger_checks::{Check, Given, Reading};
 use dewledger_quantities::{Entry, PlusMinus, Unit, UnitChoice, read, read_plus_minus, show};
 
-use crate::request::{Typed, TypedReading};
+use crate::request::{Typed, TypedReading, TypedValue};
 
 /// What was typed, read: what a check is given, and what could not be read.
 pub(crate) struct Readout {
@@ -104,6 +104,17 @@ pub(crate) fn plus_minus_unit(
     })
 }
 
+/// The text of a ± with its per cent sign, where it was typed beside that unit and is a share of the reading.
+fn plus_minus_text(item: &ReadingItem, plus_minus: &TypedValue) -> String {
+    let text = plus_minus.text.trim_end();
+    let share = plus_minus.unit.as_deref() == Some("%")
+        && Unit::find("%").is_some_and(|unit| !unit.measures(item.kind.difference()));
+    if share && !text.is_empty() && !text.ends_with('%') {
+        return format!("{text} %");
+    }
+    plus_minus.text.clone()
+}
+
 type One = Option<(Reading, Option<String>)>;
 
 fn read_one(item: &ReadingItem, typed: &TypedReading, units: &UnitChoice) -> Result<One, String> {
@@ -116,7 +127,11 @@ fn read_one(item: &ReadingItem, typed: &TypedReading, units: &UnitChoice) -> Res
         Reading { amount: number.amount, unit: Some(number.unit), half_width_si: None };
     if let Some(plus_minus) = &typed.plus_minus {
         let unit = plus_minus_unit(item, Some(typed), units);
-        reading.half_width_si = match read_plus_minus(item.kind, &plus_minus.text, unit) {
+        reading.half_width_si = match read_plus_minus(
+            item.kind,
+            &plus_minus_text(item, plus_minus),
+            unit,
+        ) {
             Ok(None) => None,
             Ok(Some(PlusMinus::Absolute(half_width))) => Some(half_width),
             Ok(Some(PlusMinus::Relative(share))) if item.kind.difference() == item.kind => {

@@ -296,6 +296,23 @@ fn a_wet_bulb_a_little_above_the_dry_bulb_is_saturated_air() {
 }
 
 #[test]
+fn a_plus_minus_typed_beside_per_cent_is_a_share_of_the_reading() {
+    let open = Open::new();
+    let shown = |text: &str, unit: &str| {
+        let mut typed = coil_si();
+        typed.readings.get_mut("flow.rate").unwrap().plus_minus =
+            Some(TypedValue { text: text.to_owned(), unit: Some(unit.to_owned()) });
+        let solved = open.solve("air_heat", typed);
+        let view = reading(&solved, "flow.rate");
+        (view.plus_minus.clone(), view.plus_minus_unit.id.clone(), view.error.clone())
+    };
+    let share = shown("4", "%");
+    assert_eq!(share.0, shown("4 %", "L/s").0);
+    assert_ne!(share.0, shown("4", "L/s").0);
+    assert_eq!((share.1.as_str(), share.2), ("%", None));
+}
+
+#[test]
 fn a_plus_minus_on_every_reading_gives_one_to_the_result() {
     let open = Open::new();
     let mut typed = coil_si();
