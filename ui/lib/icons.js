@@ -2,7 +2,7 @@
 
 import { svg } from './dom.js';
 
-/** Paths of each icon; a path that begins with `=` is drawn with a line of 4, with `o` it is a filled dot `x y r`. */
+/** Paths of each icon; a path that begins with `=` is drawn with a line of 4, with `#` as squares, with `o` it is a filled dot `x y r`. */
 const paths = {
   today: ['M5 3h14v18H5z M9 3v18 M12.5 9h3.5 M12.5 13h3.5'],
   checks: ['M4 6h3 M4 12h3 M4 18h3 M10 6h10 M10 12h10 M10 18h10', '=M4 6h3'],
@@ -14,7 +14,7 @@ const paths = {
   down: ['M5 9l7 7 7-7'],
   up: ['M5 15l7-7 7 7'],
   right: ['M9 4l8 8-8 8'],
-  more: ['=M5 12h.01 M12 12h.01 M19 12h.01'],
+  more: ['#M5 12h.01 M12 12h.01 M19 12h.01'],
   plus: ['M12 4v16 M4 12h16'],
   sign: ['M6 12h12'],
   odd: ['M12 2.5 21.5 12 12 21.5 2.5 12z M12 7.5v5.5', 'M12 15v2.2'],
@@ -45,6 +45,7 @@ export function icon(name, size = '') {
         const [cx, cy, r] = path.slice(1).split(' ');
         return svg('circle', { cx, cy, r, class: 'i-dot' });
       }
+      if (path.startsWith('#')) return svg('path', { d: path.slice(1), class: 'i-square' });
       return path.startsWith('=') ? svg('path', { d: path.slice(1), class: 'i-bold' }) : svg('path', { d: path });
     }),
   );

@@ -146,13 +146,12 @@ export class Screen extends HTMLElement {
 
   /** @param {Frame} frame */
   #foot(frame) {
-    return h(
-      'div',
-      { class: 'foot' },
+    const bars = [
       noticeBar(),
       frame.acts && h('div', { class: 'acts-bar' }, frame.acts),
       frame.root && tabBar(tabOf(readRoute(location.hash))),
-    );
+    ].filter(Boolean);
+    return bars.length > 0 && h('footer', { class: 'foot' }, bars);
   }
 }
 

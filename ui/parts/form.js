@@ -217,12 +217,13 @@ export class Form {
                   'aria-expanded': String(open),
                   onclick: () => this.toggle(section.key, !open),
                 },
-                section.title,
+                h('span', { class: 'fold-title' }, section.title),
+                section.aside && h('span', { class: 'mute' }, section.aside),
                 icon(open ? 'up' : 'down', 'i-s'),
               ),
             )
           : h('h2', { id }, section.title),
-        section.aside && h('p', null, section.aside),
+        !folds && section.aside && h('p', null, section.aside),
       ),
       !open && section.summary && h('p', { class: 'summary' }, section.summary),
       open && [
@@ -260,9 +261,12 @@ export class Form {
     const error = view.error && this.#shown.has(`error ${view.key}`) ? view.error : null;
     const notes = this.#notesOn(view);
     const odd = view.unusual && notes.some((note) => note.tone === 'unusual' && !note.accepted);
+    // A long number needs the room.
+    const wasBelow = view.was && text.length + wasFigure(view).length > 9;
     const asides = [
       view.help && { id: `${id}-help`, says: view.help },
       text.trim() === '' && view.assumed && { id: `${id}-assumed`, says: view.assumed },
+      wasBelow && { id: `${id}-was`, says: `was ${wasFigure(view)}` },
       view.read_as && { id: `${id}-read`, says: view.read_as },
     ].filter((one) => one !== null && one !== undefined && one !== false && one !== '');
     const describes = [
@@ -322,7 +326,7 @@ export class Form {
           onblur: () => this.left(),
           onkeydown: (/** @type {KeyboardEvent} */ event) => toNext(event),
         }),
-        this.#was(view, text),
+        !wasBelow && this.#was(view, text),
         this.#unit(view),
       ),
       asides.map((one) => h('p', { class: 'ask', id: one.id }, one.says)),
@@ -359,7 +363,7 @@ export class Form {
   #was(view, text) {
     if (!view.was) return null;
     const { was } = view;
-    const figure = was.unit.id === view.unit.id ? was.text : `${was.text}\u00a0${was.unit.symbol}`;
+    const figure = wasFigure(view);
     if (text !== '') return h('span', { class: 'was' }, `was ${figure}`);
     return h(
       'button',
@@ -448,6 +452,15 @@ export class Form {
       notes.map((note) => noteView({ ...note, id: elementId('note', note.code), act: (act) => this.act(act) })),
     );
   }
+}
+
+/**
+ * Last visit's reading, with its unit where that is another one.
+ * @param {Desk.ReadingView} view
+ */
+function wasFigure({ was, unit }) {
+  if (!was) return '';
+  return was.unit.id === unit.id ? was.text : `${was.text}\u00a0${was.unit.symbol}`;
 }
 
 /**

@@ -17,6 +17,8 @@ import { link } from '../lib/screen.js';
 
 /** @param {Note} note */
 export function noteView({ id, tone, lead, reason, acts = [], accepted = false, act }) {
+  // A sentence that says what is wrong leads; what mends it follows in plain type.
+  const [, first = lead, rest = ''] = reason ? [] : (/^(.+?[.!?])\s+(\p{Lu}.*)$/su.exec(lead) ?? []);
   const heavy = tone === 'impossible' || (tone === 'unusual' && !accepted);
   const kind = tone === 'impossible' ? 'wrong' : heavy ? 'unusual' : 'plain';
   const name = tone === 'impossible' ? 'wrong' : heavy ? 'odd' : accepted ? 'tick' : 'pencil';
@@ -27,7 +29,8 @@ export function noteView({ id, tone, lead, reason, acts = [], accepted = false, 
     h(
       'div',
       { class: 'note-body' },
-      h('p', { class: 'lead' }, tone === 'impossible' && h('span', { class: 'sr' }, 'Error: '), lead),
+      h('p', { class: 'lead' }, tone === 'impossible' && h('span', { class: 'sr' }, 'Error: '), first),
+      rest && h('p', null, rest),
       reason && h('p', null, reason),
       accepted && h('p', { class: 'mute' }, 'You said that it is right.'),
       act &&

@@ -26,7 +26,13 @@ export function strip(solved, { quiet = false, unusual = 0 } = {}) {
       { class: 'total' },
       h('b', null, value?.number ?? dash),
       value?.unit && h('span', { class: 'u' }, value.unit),
-      value && headline.plus_minus && h('span', { class: 'pm' }, headline.plus_minus.text),
+      value &&
+        headline.plus_minus &&
+        h(
+          'span',
+          { class: typeof headline.plus_minus.si === 'number' ? 'pm' : 'pm unknown' },
+          headline.plus_minus.text,
+        ),
       value && headline.also && h('span', { class: 'of' }, headline.also),
       why && h('span', { class: 'why' }, why),
     ),
@@ -123,12 +129,11 @@ function percent(share) {
 }
 
 /**
- * Everything below the headline.
+ * The results below the headline.
  * @param {Desk.Solved} solved
  * @param {{ notes: Desk.NoteView[], act?: (act: Desk.Act) => void }} how the notes that stand here
  */
 export function results(solved, { notes, act }) {
-  const rows = solved.groups.map((group) => ({ group, shown: group.rows.length > 0 }));
   return [
     notes.length > 0 &&
       h(
@@ -137,8 +142,23 @@ export function results(solved, { notes, act }) {
         head('notes-title', 'Notes'),
         notes.map((note) => noteView({ ...note, id: `note-${note.code.replace(/[^a-zA-Z0-9_]+/g, '-')}`, act })),
       ),
-    rows.filter((one) => one.shown).map(({ group }) => groupView(group)),
-    solved.versus.map((versus) => versusView(versus)),
+    solved.groups.filter((group) => group.rows.length > 0).map(groupView),
+    solved.versus.length > 0 &&
+      h(
+        'section',
+        { key: 'versus', class: 'sec', 'aria-labelledby': 'versus-title' },
+        head('versus-title', 'Book constants would say'),
+        solved.versus.map((versus, at) => versusView(versus, at === 0)),
+      ),
+  ];
+}
+
+/**
+ * What stands behind the results: what decides the ±, cautions, the air states, the working.
+ * @param {Desk.Solved} solved
+ */
+export function beside(solved) {
+  return [
     driversView(solved.drivers),
     cautionsView(solved.cautions),
     statesView(solved.states),
@@ -210,53 +230,76 @@ export function figures(rows, caption) {
           ),
           h('td', { class: 'n' }, h('b', null, row.value?.number ?? dash)),
           h('td', { class: 'u' }, row.value?.unit ?? ''),
-          h('td', { class: 'pm' }, row.value ? (row.plus_minus?.text ?? '') : ''),
+          plusMinusCell(row),
         ),
       ),
     ),
   );
 }
 
-/** @param {Desk.Versus} versus */
-function versusView(versus) {
-  const id = `versus-${versus.title.replace(/\W+/g, '-')}`;
-  const widest = Math.max(...versus.parts.map((part) => Math.abs(part.share)), Number.MIN_VALUE);
+/**
+ * A ± has the face of its result; where it is not known, that is said in words.
+ * @param {Desk.ResultRow} row
+ */
+function plusMinusCell({ value, plus_minus: plusMinus }) {
+  if (!value || !plusMinus) return h('td', { class: 'pm' });
+  return h('td', { class: typeof plusMinus.si === 'number' ? 'pm' : 'pm unknown' }, plusMinus.text);
+}
+
+/**
+ * @param {Desk.Versus} versus
+ * @param {boolean} open whether the parts of the gap stand open at first
+ */
+function versusView(versus, open) {
   return h(
-    'section',
-    { key: id, class: 'sec', 'aria-labelledby': id },
-    head(id, versus.title),
+    'div',
+    { key: versus.title, class: 'versus-block' },
     h(
       'div',
       { class: 'versus' },
-      h('p', null, versus.reason),
+      h('div', null, h('h3', null, versus.title), h('p', null, versus.reason)),
       h('p', { class: 'book' }, h('del', null, versus.book.number), ' ', versus.book.unit),
     ),
-    h('p', { class: 'gap-line' }, versus.gap, versus.verdict && [' ', h('strong', null, versus.verdict)]),
+    h('p', { class: 'gap-line' }, versus.gap, versus.verdict && [': ', h('strong', null, versus.verdict)]),
     versus.parts.length > 0 &&
       h(
-        'ul',
-        { class: 'bars', 'aria-label': 'What makes the gap' },
-        versus.parts.map((part) =>
-          h(
-            'li',
-            { class: 'drv' },
-            h('span', null, part.label),
-            svg(
-              'svg',
-              { width: '100%', height: 14, 'aria-hidden': 'true' },
-              svg('rect', {
-                class: 'd-bar',
-                x: percent(0.5 + Math.min(0, part.share / widest) / 2),
-                y: 2,
-                width: percent(Math.abs(part.share / widest) / 2),
-                height: 10,
-              }),
-              svg('line', { class: 'd-zero', x1: '50%', x2: '50%', y1: 0, y2: 14 }),
-            ),
-            h('b', null, part.text),
-          ),
-        ),
+        'details',
+        { class: 'gap-parts', open },
+        h('summary', null, h('span', null, 'What makes the gap'), icon('down', 'i-s')),
+        gapBars(versus.parts),
       ),
+  );
+}
+
+/**
+ * Signed parts as bars to both sides of a middle line.
+ * @param {Desk.VersusPart[]} parts
+ */
+function gapBars(parts) {
+  const widest = Math.max(...parts.map((part) => Math.abs(part.share)), Number.MIN_VALUE);
+  return h(
+    'ul',
+    { class: 'bars' },
+    parts.map((part) =>
+      h(
+        'li',
+        { class: 'drv' },
+        h('span', null, part.label),
+        svg(
+          'svg',
+          { width: '100%', height: 14, 'aria-hidden': 'true' },
+          svg('rect', {
+            class: 'd-bar',
+            x: percent(0.5 + Math.min(0, part.share / widest) / 2),
+            y: 2,
+            width: percent(Math.abs(part.share / widest) / 2),
+            height: 10,
+          }),
+          svg('line', { class: 'd-zero', x1: '50%', x2: '50%', y1: 0, y2: 14 }),
+        ),
+        h('b', null, part.text),
+      ),
+    ),
   );
 }
 

@@ -15,7 +15,7 @@ import { differs } from '../lib/typed.js';
 import { Form } from '../parts/form.js';
 import { noteView } from '../parts/note.js';
 import { placeSheet } from '../parts/place-sheet.js';
-import { results, spoken, strip } from '../parts/result.js';
+import { beside, results, spoken, strip } from '../parts/result.js';
 
 /** @typedef {{ typed: Desk.Typed, place: Desk.Place }} Kept */
 
@@ -212,8 +212,8 @@ export class Check extends Screen {
           title: solved.check.label,
           where: [
             solved.subtitle,
-            this.#corrects && h('span', { class: 'draft-kept' }, 'Corrects a filed entry'),
-            this.#kept && h('span', { class: 'draft-kept' }, `draft kept ${this.#kept}`),
+            this.#corrects && [' ', h('span', { class: 'draft-kept' }, 'corrects a filed entry')],
+            this.#kept && [' ', h('span', { class: 'draft-kept' }, `draft kept ${this.#kept}`)],
           ],
           invented: solved.invented,
           up: '#/checks',
@@ -233,14 +233,19 @@ export class Check extends Screen {
           'div',
           { class: 'two' },
           h(
-            'form',
-            {
-              class: 'typed',
-              autocomplete: 'off',
-              novalidate: true,
-              onsubmit: (/** @type {Event} */ event) => event.preventDefault(),
-            },
-            sections,
+            'div',
+            { class: 'given' },
+            h(
+              'form',
+              {
+                class: 'typed',
+                autocomplete: 'off',
+                novalidate: true,
+                onsubmit: (/** @type {Event} */ event) => event.preventDefault(),
+              },
+              sections,
+            ),
+            h('div', { class: 'beside' }, beside(solved)),
           ),
           h(
             'div',

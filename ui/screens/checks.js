@@ -61,7 +61,7 @@ export class Checks extends Screen {
                 key: check.id,
                 href: address(['check', check.id], { ...place }),
                 title: check.question,
-                says: [h('b', null, check.label), `. ${check.takes}`],
+                says: [h('b', null, check.label), `: ${check.takes}`],
               }),
             ),
         ),

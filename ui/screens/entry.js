@@ -7,7 +7,7 @@ import { icon } from '../lib/icons.js';
 import { notice, undoMs } from '../lib/notice.js';
 import { address } from '../lib/route.js';
 import { button, go, goInstead, link, linkButton, Screen } from '../lib/screen.js';
-import { results, strip } from '../parts/result.js';
+import { beside, results, strip } from '../parts/result.js';
 import { linkRow, listSection } from '../parts/rows.js';
 
 export class Entry extends Screen {
@@ -32,7 +32,8 @@ export class Entry extends Screen {
   /** Milliseconds for which Undo is still offered. */
   #undoLeft() {
     const last = lastFiled(this.route.entry ?? '');
-    return last ? Math.max(0, last.at + undoMs - performance.now()) : 0;
+    // Taking back a correction would withdraw what it corrects too; it is corrected again instead.
+    return last && !last.corrects ? Math.max(0, last.at + undoMs - performance.now()) : 0;
   }
 
   /** Takes the filing back; the form comes back as it was typed, as a draft. */
@@ -113,7 +114,7 @@ export class Entry extends Screen {
         { class: 'two' },
         h(
           'div',
-          { class: 'typed' },
+          { class: 'given' },
           h(
             'section',
             { class: 'sec', 'aria-labelledby': 'as-typed' },
@@ -139,7 +140,7 @@ export class Entry extends Screen {
                     { class: 'fig' },
                     h('th', { scope: 'row' }, row.label),
                     h('td', { class: 'n as-typed' }, row.text),
-                    h('td', { class: 'pm' }, row.plus_minus),
+                    h('td', { class: 'pm as-typed' }, row.plus_minus),
                   ),
                 ),
               ),
@@ -163,10 +164,15 @@ export class Entry extends Screen {
             ),
           h(
             'div',
-            { class: 'sec' },
-            place.equipment &&
-              linkRow({ href: address(['equipment', place.equipment]), title: 'The equipment', says: entry.says }),
-            place.site && linkRow({ href: address(['site', place.site]), title: 'The site' }),
+            { class: 'beside' },
+            beside(solved),
+            h(
+              'div',
+              { class: 'sec' },
+              place.equipment &&
+                linkRow({ href: address(['equipment', place.equipment]), title: 'The equipment', says: entry.says }),
+              place.site && linkRow({ href: address(['site', place.site]), title: 'The site' }),
+            ),
           ),
         ),
         h(

@@ -69,7 +69,8 @@ export class Home extends Screen {
           'div',
           null,
           overview.empty && this.#welcome(),
-          overview.drafts.map((draft, at) => this.#draft(draft, at === 0)),
+          overview.drafts.slice(0, 1).map((draft) => this.#draft(draft)),
+          overview.drafts.length > 1 && this.#olderDrafts(overview.drafts.slice(1)),
           listSection('Start', [
             h(
               'div',
@@ -122,23 +123,40 @@ export class Home extends Screen {
     );
   }
 
-  /**
-   * @param {Desk.DraftRow} draft
-   * @param {boolean} first
-   */
-  #draft(draft, first) {
+  /** @param {Desk.DraftRow[]} drafts */
+  #olderDrafts(drafts) {
+    return listSection(
+      'Not finished either',
+      drafts.map((draft) =>
+        h(
+          'div',
+          { class: 'draft-row', key: draft.draft },
+          linkRow({ href: address(['draft', draft.draft]), title: draft.label, says: draft.says }),
+          link('Discard', () => this.#discard(draft)),
+        ),
+      ),
+    );
+  }
+
+  /** The newest draft. @param {Desk.DraftRow} draft */
+  #draft(draft) {
     const id = `draft-${draft.draft}`;
     return h(
       'section',
-      { class: 'sec', 'aria-labelledby': id, key: id },
+      { class: 'sec', 'aria-labelledby': `${id} ${id}-what`, key: id },
       h('span', { class: 'hang' }, icon('pencil')),
       h('div', { class: 'sec-head' }, h('h2', { id }, 'Not finished')),
-      h('p', { class: 'lede' }, h('strong', null, draft.label)),
-      h('p', null, draft.says),
+      h(
+        'p',
+        { class: 'lede', id: `${id}-what` },
+        h('strong', null, draft.label),
+        h('span', { class: 'sr' }, ' '),
+        h('span', { class: 'says' }, draft.says),
+      ),
       h(
         'div',
         { class: 'draft-acts' },
-        button('Continue', () => go(address(['draft', draft.draft])), { kind: first ? 'go slim' : 'slim' }),
+        button('Continue', () => go(address(['draft', draft.draft])), { kind: 'go slim' }),
         link('Discard', () => this.#discard(draft)),
       ),
     );

@@ -12,6 +12,7 @@ import { noteView } from '../parts/note.js';
 export class VisitEdit extends Screen {
   /** @type {Desk.VisitFormView | null} */
   #view = null;
+  #invented = false;
   #people = '';
   #running = '';
   /** @type {string | null} */
@@ -29,6 +30,7 @@ export class VisitEdit extends Screen {
 
   async load() {
     const view = await this.#ask(null);
+    this.#invented = (await ask({ ask: 'site', site: view.site }, 'site')).invented;
     [this.#people, this.#running, this.#form.typed] = [view.people, view.running, view.typed];
     this.#take(view);
   }
@@ -92,6 +94,7 @@ export class VisitEdit extends Screen {
       {
         title: view.visit ? 'Change the visit' : 'Start a visit',
         where: view.site_name,
+        invented: this.#invented,
         up: address(['site', view.site]),
         acts: button(view.visit ? 'Save' : 'Start the visit', () => this.#save(), { kind: 'go', icon: 'tick' }),
       },
