@@ -7,13 +7,26 @@ import { openSheet } from '../lib/sheet.js';
 /** @typedef {import('./form.js').Form} Form */
 
 /**
+ * Arrow keys go along the rows of one question.
+ * @param {KeyboardEvent} event
+ */
+function alongRows(event) {
+  const step = { ArrowDown: 1, ArrowRight: 1, ArrowUp: -1, ArrowLeft: -1 }[event.key];
+  const row = /** @type {HTMLElement} */ (event.currentTarget);
+  const rows = /** @type {HTMLElement[]} */ ([...(row.parentElement?.children ?? [])]);
+  if (!step || rows.length === 0) return;
+  event.preventDefault();
+  rows[(rows.indexOf(row) + step + rows.length) % rows.length]?.focus();
+}
+
+/**
  * One row of a sheet that is chosen by a tap.
  * @param {{ label: string, help?: string | null | undefined, on: boolean, choose: () => void }} row
  */
 export function radioRow({ label, help, on, choose }) {
   return h(
     'button',
-    { type: 'button', class: 'row', role: 'radio', 'aria-checked': String(on), onclick: choose },
+    { type: 'button', class: 'row', role: 'radio', 'aria-checked': String(on), onclick: choose, onkeydown: alongRows },
     h('span', null, h('span', { class: 't' }, label), help && h('span', { class: 's' }, help)),
     svg(
       'svg',

@@ -277,7 +277,7 @@ export class Form {
     ];
     return h(
       'div',
-      { key: `field ${view.key}`, class: `field${error ? ' wrong' : ''}${odd ? ' odd' : ''}` },
+      { key: `field ${view.pick?.key ?? view.key}`, class: `field${error ? ' wrong' : ''}${odd ? ' odd' : ''}` },
       h(
         'div',
         { class: 'field-top' },

@@ -173,7 +173,9 @@ export class Check extends Screen {
 
   async #more() {
     const wish = await openSheet('This check', (/** @type {import('../lib/sheet.js').Sheet<string>} */ sheet) => [
-      row('Where it is made', this.#solved?.subtitle ?? '', () => sheet.close('place')),
+      row('Where it is made', this.#place.site ? (this.#solved?.subtitle ?? '') : 'Not chosen yet', () =>
+        sheet.close('place'),
+      ),
       row('Units', 'Changes what is shown. What you typed stays as you typed it.', () => sheet.close('units')),
       row('Discard', 'What is typed here goes. It can be brought back for a moment.', () => sheet.close('discard')),
     ]);
@@ -186,6 +188,13 @@ export class Check extends Screen {
     const place = await placeSheet(this.#place, 'Set the place');
     if (!place) return;
     this.#place = place;
+    // What the place knows (its pressure) fills what is still blank; what was typed stays.
+    const { typed } = await ask({ ask: 'start', check: this.#check(), place }, 'form');
+    this.#form.typed = {
+      ...this.#form.typed,
+      choices: { ...typed.choices, ...this.#form.typed.choices },
+      readings: { ...typed.readings, ...this.#form.typed.readings },
+    };
     this.#first = {};
     this.#changed();
   }

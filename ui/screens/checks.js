@@ -11,9 +11,26 @@ export class Checks extends Screen {
   /** @type {Desk.CheckName[]} */
   #checks = [];
   #wanted = '';
+  /** @type {{ place: Desk.Place, name: string, invented: boolean } | null} Where a check started now may belong. */
+  #here = null;
+  /** Whether a check started now is made there. A place is never taken without being asked for. */
+  #isHere = false;
 
   async load() {
-    this.#checks = (await ask({ ask: 'checks' }, 'checks')).checks;
+    const [{ checks }, overview] = await Promise.all([
+      ask({ ask: 'checks' }, 'checks'),
+      ask({ ask: 'overview' }, 'overview'),
+    ]);
+    this.#checks = checks;
+    const place = placeOf(this.route);
+    if (place.site) {
+      const { name, invented } = await ask({ ask: 'site', site: place.site }, 'site');
+      this.#here = { place, name, invented };
+      this.#isHere = true;
+    } else if (overview.here) {
+      const { place: there, site, invented } = overview.here;
+      this.#here = { place: there, name: site, invented };
+    }
   }
 
   draw() {
@@ -23,9 +40,14 @@ export class Checks extends Screen {
       return words.every((word) => text.includes(word));
     });
     const groups = [...new Set(found.map((check) => check.group))];
-    const place = placeOf(this.route);
+    const place = this.#isHere ? this.#here?.place : {};
     return this.frame(
-      { title: 'What do you want to know?', root: true, where: `${this.#checks.length} checks` },
+      {
+        title: 'What do you want to know?',
+        root: true,
+        where: this.#isHere ? `At ${this.#here?.name}` : 'The place is asked for when it is filed.',
+        invented: this.#isHere && (this.#here?.invented ?? false),
+      },
       h(
         'div',
         { class: 'field find' },
@@ -47,6 +69,7 @@ export class Checks extends Screen {
           }),
         ),
       ),
+      this.#here && this.#placeChip(this.#here.name),
       h('p', { class: 'sr', role: 'status' }, words.length > 0 ? `${found.length} found` : ''),
       found.length === 0 &&
         words.length > 0 &&
@@ -65,6 +88,27 @@ export class Checks extends Screen {
               }),
             ),
         ),
+      ),
+    );
+  }
+
+  /** @param {string} name */
+  #placeChip(name) {
+    return h(
+      'div',
+      { class: 'chips gap-small', key: 'here' },
+      h(
+        'button',
+        {
+          type: 'button',
+          class: this.#isHere ? 'chip on' : 'chip',
+          'aria-pressed': String(this.#isHere),
+          onclick: () => {
+            this.#isHere = !this.#isHere;
+            this.render();
+          },
+        },
+        `At ${name}`,
       ),
     );
   }

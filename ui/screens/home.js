@@ -142,13 +142,13 @@ export class Home extends Screen {
   #draft(draft) {
     const id = `draft-${draft.draft}`;
     return h(
-      'section',
-      { class: 'sec', 'aria-labelledby': `${id} ${id}-what`, key: id },
+      'div',
+      { class: 'sec', key: id },
       h('span', { class: 'hang' }, icon('pencil')),
-      h('div', { class: 'sec-head' }, h('h2', { id }, 'Not finished')),
+      h('div', { class: 'sec-head' }, h('h2', null, 'Not finished')),
       h(
         'p',
-        { class: 'lede', id: `${id}-what` },
+        { class: 'lede' },
         h('strong', null, draft.label),
         h('span', { class: 'sr' }, ' '),
         h('span', { class: 'says' }, draft.says),
