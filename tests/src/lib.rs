@@ -1,17 +1,15 @@
-//! Shared means of the tests.
+//! Shared means of the tests: the built programs, a driver of the real window and of a browser of a phone's shape,
+//! and the hand that types and taps.
 
-use std::path::PathBuf;
+#![expect(
+    clippy::missing_panics_doc,
+    reason = "means of tests: what does not work fails the test where it stands"
+)]
 
-/// A built program of this workspace, beside the test itself in the target folder.
-///
-/// # Panics
-///
-/// Where it was not built: the whole workspace is built and tested together.
-#[must_use]
-pub fn program(name: &str) -> PathBuf {
-    let test = std::env::current_exe().expect("a test has a path");
-    let folder = test.ancestors().nth(2).expect("tests are built two folders down");
-    let program = folder.join(name);
-    assert!(program.exists(), "{} is not built: test the whole workspace", program.display());
-    program
-}
+mod driver;
+mod hand;
+mod process;
+
+pub use driver::{Driver, has_chromium};
+pub use hand::Hand;
+pub use process::{Ended, program};

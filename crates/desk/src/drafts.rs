@@ -10,6 +10,7 @@ use crate::form_view::work;
 use crate::places;
 use crate::reply::{DraftRow, Fault, FaultCode, FormOpened, Reply};
 use crate::request::{Place, Typed};
+use crate::typed::spelt_out;
 
 /// A form as it is kept.
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
@@ -53,7 +54,10 @@ pub(crate) fn start(at: &Asked<'_>, id: &str, place: Place) -> Result<Reply, Fau
 }
 
 pub(crate) fn keep(at: &mut Asked<'_>, draft: Option<String>, kept: Kept) -> Result<Reply, Fault> {
-    let title = check(&kept.check)?.about().label;
+    let check = check(&kept.check)?;
+    let title = check.about().label;
+    let typed = spelt_out(&|given| check.form(given), kept.typed, &at.state.units);
+    let kept = Kept { typed, ..kept };
     let id = draft.as_deref().map(draft_id).transpose()?;
     let text = serde_json::to_string(&kept)
         .map_err(|error| Fault::new(FaultCode::BadRequest, error.to_string()))?;

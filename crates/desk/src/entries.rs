@@ -40,6 +40,9 @@ pub(crate) struct FiledReading {
     pub(crate) half_width_si: Option<f64>,
     #[serde(default)]
     pub(crate) plus_minus: Option<String>,
+    /// Without a ± of its own its doubt was covered otherwise.
+    #[serde(default)]
+    pub(crate) covered: bool,
 }
 
 /// The body of an entry; none where another version wrote what this one cannot read.
@@ -75,8 +78,8 @@ pub(crate) fn solve(
 fn readings(kept: &Kept, units: &UnitChoice) -> Result<(Typed, Vec<FiledReading>), Fault> {
     let check = check(&kept.check)?;
     let read = read_check(check, &kept.typed, units);
-    if let Some((field, says)) = read.errors.iter().next() {
-        return Err(Fault::at(field.clone(), says.clone()));
+    if let Some((field, message)) = read.errors.iter().next() {
+        return Err(Fault::at(field.clone(), message.says.clone()));
     }
     let mut typed = kept.typed.clone();
     let mut rows = Vec::new();
@@ -107,6 +110,7 @@ fn readings(kept: &Kept, units: &UnitChoice) -> Result<(Typed, Vec<FiledReading>
                 si: reading.amount.si(),
                 half_width_si: reading.half_width_si,
                 plus_minus,
+                covered: item.covered,
             });
         }
     }
@@ -322,7 +326,9 @@ fn reading_row(reading: &FiledReading) -> ReadingRow {
     ReadingRow {
         label: reading.name.clone(),
         text,
-        plus_minus: reading.plus_minus.clone().unwrap_or_else(|| "± not\u{a0}known".to_owned()),
+        plus_minus: reading.plus_minus.clone().unwrap_or_else(|| {
+            if reading.covered { String::new() } else { "± not\u{a0}known".to_owned() }
+        }),
     }
 }
 

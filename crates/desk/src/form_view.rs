@@ -357,8 +357,8 @@ impl Draw<'_> {
 
     /// What stands against a field: its text is no number, the check refuses it, or a question hangs on it.
     fn error(&self, key: &str) -> Option<Message> {
-        if let Some(says) = self.read.errors.get(key) {
-            return Some(Message { says: says.clone(), acts: Vec::new() });
+        if let Some(message) = self.read.errors.get(key) {
+            return Some(message.clone());
         }
         if let Some(refusal) = self.refusal.filter(|refusal| refusal.field == key) {
             return Some(Message {

@@ -89,11 +89,11 @@ pub(crate) fn headline(answer: &Answer, waits: Option<&str>, units: &UnitChoice)
         value: value_of(figure, units),
         plus_minus: plus_minus(figure, units),
         also: also(figure, units),
-        why_not: figure
-            .withheld
-            .as_ref()
-            .map(|why| why.say(units))
-            .filter(|_| figure.value.is_none()),
+        why_not: if figure.value.is_some() {
+            None
+        } else {
+            waits.map(str::to_owned).or_else(|| figure.withheld.as_ref().map(|why| why.say(units)))
+        },
         split: split(answer),
         minor: minor(answer, units),
     }
@@ -156,13 +156,18 @@ fn minor(answer: &Answer, units: &UnitChoice) -> Vec<MinorView> {
         MinorView { label, text }
     };
     let mut minor = Vec::new();
+    // The bar says what the parts are of; where they oppose each other there is none, and each says its own sign.
+    let split = !split(answer).is_empty();
     for figure in &answer.figures {
-        match figure.role.as_str() {
-            "sensible_part" => minor.push(view(figure, label(figure).to_lowercase())),
-            "latent_part" => minor.push(view(figure, label(figure).to_lowercase())),
-            "minor" => minor.push(view(figure, label(figure).to_lowercase())),
-            _ => {}
-        }
+        let short = match (figure.role.as_str(), figure.key.as_str()) {
+            ("sensible_part", _) if split => "sensible".to_owned(),
+            ("latent_part", _) if split => "latent".to_owned(),
+            ("sensible_part" | "latent_part", _) => label(figure).to_lowercase(),
+            ("minor", "shr") => "SHR".to_owned(),
+            ("minor", _) => label(figure).to_lowercase(),
+            _ => continue,
+        };
+        minor.push(view(figure, short));
     }
     minor
 }

@@ -4,16 +4,19 @@ use std::collections::BTreeMap;
 
 use dewledger_checks::form::{Item, ReadingItem, Section};
 use dewledger_checks::{Check, Given, Reading};
-use dewledger_quantities::{Entry, PlusMinus, Unit, UnitChoice, read, read_plus_minus, show};
+use dewledger_quantities::{
+    Entry, PlusMinus, ReadError, Unit, UnitChoice, read, read_plus_minus, show,
+};
 
+use crate::reply::{Act, Change, Message};
 use crate::request::{Typed, TypedReading, TypedValue};
 
 /// What was typed, read: what a check is given, and what could not be read.
 pub(crate) struct Readout {
     pub(crate) given: Given,
     pub(crate) sections: Vec<Section>,
-    /// Why a text is no number, by key of the reading.
-    pub(crate) errors: BTreeMap<String, String>,
+    /// Why a text is no number, by key of the reading, with both numbers where it could be two.
+    pub(crate) errors: BTreeMap<String, Message>,
     /// "read as 17.1", by key of the reading.
     pub(crate) echoes: BTreeMap<String, String>,
 }
@@ -95,12 +98,7 @@ pub(crate) fn plus_minus_unit(
         if unit.measures(difference) {
             return unit;
         }
-        match unit.id {
-            "degF" => Unit::find("degF_difference"),
-            "degC" => Unit::find("K"),
-            _ => None,
-        }
-        .unwrap_or_else(|| units.get(difference))
+        unit.for_difference(item.kind).unwrap_or_else(|| units.get(difference))
     })
 }
 
@@ -115,35 +113,66 @@ fn plus_minus_text(item: &ReadingItem, plus_minus: &TypedValue) -> String {
     plus_minus.text.clone()
 }
 
+/// The sentence, and both numbers as taps where the text could be either.
+fn message(item: &ReadingItem, unit: &Unit, error: &ReadError) -> Message {
+    let mut acts = Vec::new();
+    if let ReadError::Ambiguous { one, other, .. } = error {
+        for text in [one, other] {
+            acts.push(Act {
+                label: format!("It is {text}"),
+                changes: vec![Change::Type {
+                    key: item.key.to_string(),
+                    text: text.clone(),
+                    unit: unit.id.to_owned(),
+                }],
+            });
+        }
+    }
+    Message { says: error.to_string(), acts }
+}
+
+/// The same, with the unit of every reading written beside it, so that a later choice of units does not change what
+/// it says. Blank readings are left out.
+pub(crate) fn spelt_out(form: &Form<'_>, mut typed: Typed, units: &UnitChoice) -> Typed {
+    let read = read_form(form, &typed, units);
+    for section in &read.sections {
+        for item in &section.items {
+            let Item::Reading(item) = item else { continue };
+            let unit = unit_of(item, typed.readings.get(item.key.as_ref()), units);
+            if let Some(reading) = typed.readings.get_mut(item.key.as_ref()) {
+                reading.unit = Some(unit.id.to_owned());
+            }
+        }
+    }
+    typed.readings.retain(|_, reading| {
+        let doubted =
+            reading.plus_minus.as_ref().is_some_and(|width| !width.text.trim().is_empty());
+        doubted || !reading.text.trim().is_empty()
+    });
+    typed
+}
+
 type One = Option<(Reading, Option<String>)>;
 
-fn read_one(item: &ReadingItem, typed: &TypedReading, units: &UnitChoice) -> Result<One, String> {
+fn read_one(item: &ReadingItem, typed: &TypedReading, units: &UnitChoice) -> Result<One, Message> {
     let unit = unit_of(item, Some(typed), units);
-    let number = match read(item.kind, &typed.text, unit).map_err(|error| error.to_string())? {
-        Entry::NotRead => return Ok(None),
-        Entry::Read(number) => number,
-    };
+    let number =
+        match read(item.kind, &typed.text, unit).map_err(|error| message(item, unit, &error))? {
+            Entry::NotRead => return Ok(None),
+            Entry::Read(number) => number,
+        };
     let mut reading =
         Reading { amount: number.amount, unit: Some(number.unit), half_width_si: None };
     if let Some(plus_minus) = &typed.plus_minus {
         let unit = plus_minus_unit(item, Some(typed), units);
-        reading.half_width_si = match read_plus_minus(
-            item.kind,
-            &plus_minus_text(item, plus_minus),
-            unit,
-        ) {
+        let text = plus_minus_text(item, plus_minus);
+        reading.half_width_si = match read_plus_minus(item.kind, &text, unit) {
             Ok(None) => None,
             Ok(Some(PlusMinus::Absolute(half_width))) => Some(half_width),
-            Ok(Some(PlusMinus::Relative(share))) if item.kind.difference() == item.kind => {
-                Some(share * number.amount.si().abs())
+            Ok(Some(PlusMinus::Relative(share))) => Some(share * number.amount.si().abs()),
+            Err(error) => {
+                return Err(Message { says: format!("The ±: {error}"), acts: Vec::new() });
             }
-            Ok(Some(PlusMinus::Relative(_))) => {
-                return Err(
-                    "A ± in per cent depends on the zero of this scale. Type it as a difference."
-                        .to_owned(),
-                );
-            }
-            Err(error) => return Err(format!("The ±: {error}")),
         };
     }
     let echo = (number.comma || number.unit_typed)

@@ -64,13 +64,10 @@ const EVERYDAY: &[(Kind, f64)] = &[
 ];
 
 pub(crate) fn view(units: &UnitChoice) -> UnitsView {
-    let preset = if *units == UnitChoice::ip() {
-        Some(Preset::Ip)
-    } else if *units == UnitChoice::si() {
-        Some(Preset::Si)
-    } else {
-        None
-    };
+    let preset = units.preset().map(|preset| match preset {
+        dewledger_quantities::Preset::Ip => Preset::Ip,
+        dewledger_quantities::Preset::Si => Preset::Si,
+    });
     let rows = EVERYDAY
         .iter()
         .map(|(kind, si)| {
@@ -96,13 +93,10 @@ pub(crate) fn choose(at: &mut Asked<'_>, quantity: &str, unit: &str) -> Result<R
         .set(kind, unit)
         .map_err(|error| Fault::new(FaultCode::BadRequest, format!("{error}.")))?;
     // A difference follows its quantity, so that °F and its differences do not part.
-    let follower = match (kind, unit.id) {
-        (Kind::Temperature, "degF") => Unit::find("degF_difference"),
-        (Kind::Temperature, _) => Unit::find("K"),
-        _ => Some(unit),
-    };
-    if let Some(follower) = follower.filter(|follower| follower.measures(kind.difference())) {
-        let _ = units.set(kind.difference(), follower);
+    if let Some(follower) = unit.for_difference(kind) {
+        units
+            .set(kind.difference(), follower)
+            .map_err(|error| Fault::new(FaultCode::BadRequest, format!("{error}.")))?;
     }
     keep(at, units)?;
     Ok(Reply::Units(view(&at.state.units)))

@@ -16,7 +16,7 @@ use crate::reply::{
     Fault, NoteView, Reply, ResultRow, Tone, ValueView, VisitFormView, VisitRow, VisitView,
 };
 use crate::request::{Place, Typed};
-use crate::typed::read_form;
+use crate::typed::{read_form, spelt_out};
 
 /// A visit's body.
 #[derive(Debug, Clone, Default, PartialEq, Serialize, Deserialize)]
@@ -233,8 +233,8 @@ pub(crate) fn save(
     typed: VisitTyped,
 ) -> Result<Reply, Fault> {
     let read = read_form(&visit_sections, &typed.typed, &at.state.units);
-    if let Some((field, says)) = read.errors.iter().next() {
-        return Err(Fault::at(field.clone(), says.clone()));
+    if let Some((field, message)) = read.errors.iter().next() {
+        return Err(Fault::at(field.clone(), message.says.clone()));
     }
     if let Err(Stop::Refused(refusal)) = pressure::here(&read.given) {
         return Err(Fault::at(refusal.field.to_string(), refusal.says.say(&at.state.units)));
@@ -247,7 +247,7 @@ pub(crate) fn save(
         started_ms,
         people: typed.people.trim().to_owned(),
         running: typed.running.trim().to_owned(),
-        typed: spelt_out(typed.typed, at),
+        typed: spelt_out(&visit_sections, typed.typed, &at.state.units),
     })?;
     let new = Body {
         site: Some(id),
@@ -262,18 +262,6 @@ pub(crate) fn save(
         Some(head) => at.state.ledger.revise(&head, at.now, &new, None)?,
     };
     self::visit(at, &revision.record.to_string())
-}
-
-/// With the unit of every reading written beside it, so that a later choice of units does not change what it says.
-pub(crate) fn spelt_out(mut typed: Typed, at: &Asked<'_>) -> Typed {
-    let read = read_form(&visit_sections, &typed, &at.state.units);
-    for (key, reading) in read.given.readings() {
-        if let (Some(typed), Some(unit)) = (typed.readings.get_mut(key), reading.unit) {
-            typed.unit = Some(unit.id.to_owned());
-        }
-    }
-    typed.readings.retain(|_, reading| !reading.text.trim().is_empty());
-    typed
 }
 
 /// What a site's elevation is, in SI.

@@ -1,0 +1,96 @@
+//! The rules of axe-core (dev only, from npm, pinned in `ui-dev/package.json`) over every screen, in Chromium with a
+//! phone's shape and a desktop's, in every theme.
+
+#![expect(clippy::unwrap_used, reason = "what fails here fails the test")]
+
+use std::path::PathBuf;
+
+use dewledger_tests::{Driver, Hand, has_chromium};
+use serde_json::{Value, json};
+
+/// The rules' own text, run within the page.
+fn axe() -> String {
+    let path = PathBuf::from(env!("CARGO_MANIFEST_DIR"))
+        .join("../ui-dev/node_modules/axe-core/axe.min.js");
+    std::fs::read_to_string(&path)
+        .unwrap_or_else(|error| panic!("{}: {error}; run npm ci --prefix ui-dev", path.display()))
+}
+
+const RUN: &str = "
+    const done = arguments[arguments.length - 1];
+    axe.run(document, { resultTypes: ['violations'] }).then(
+        (found) => done(found.violations.map((v) => v.id + ': ' + v.nodes.map((n) => n.html + ' ' + n.failureSummary).join(' | '))),
+        (error) => done([String(error)]),
+    );
+";
+
+/// The screens that need no identity in their address.
+const PLAIN: &[&str] =
+    &["#/", "#/checks", "#/sites", "#/sites/new", "#/units", "#/appearance", "#/about"];
+const CHECKS: &[&str] = &["air_heat", "air_state", "book_constants", "mixing", "condensate"];
+
+async fn holds(driver: &Driver, axe: &str, screen: &str) {
+    // A client runs scripts outside the page's policy, as a person's own tools would.
+    driver.client.execute(axe, Vec::new()).await.unwrap();
+    let found: Value = driver.client.execute_async(RUN, Vec::new()).await.unwrap();
+    let found: Vec<String> = serde_json::from_value(found).unwrap();
+    assert!(found.is_empty(), "{screen}:\n{}", found.join("\n"));
+}
+
+async fn every_screen(driver: &Driver, hand: &Hand, axe: &str) {
+    for screen in PLAIN {
+        hand.go(screen).await;
+        holds(driver, axe, screen).await;
+    }
+    for check in CHECKS {
+        let screen = format!("#/check/{check}");
+        hand.go(&screen).await;
+        holds(driver, axe, &screen).await;
+    }
+    hand.go("#/sites").await;
+    for tap in ["Haldry Fork School", "AH-2", "Heat moved by the air"] {
+        hand.tap(tap).await;
+        holds(driver, axe, tap).await;
+    }
+    // A refused form: two bulbs the wrong way round.
+    hand.go("#/check/air_state").await;
+    hand.type_into("pressure.elevation", "1609 m").await;
+    hand.type_into("air.dry_bulb", "62 F").await;
+    hand.type_into("air.wet_bulb", "80 F").await;
+    hand.go("#/checks").await;
+    holds(driver, axe, "after a refusal").await;
+}
+
+fn look(shape: Value) {
+    if !has_chromium() {
+        return;
+    }
+    let runtime = tokio::runtime::Builder::new_current_thread().enable_all().build().unwrap();
+    runtime.block_on(async {
+        let axe = axe();
+        let folder = tempfile::tempdir().unwrap();
+        let driver =
+            Driver::browser(folder.path(), &folder.path().join("ledger.dewledger"), shape).await;
+        let hand = Hand::new(&driver.client);
+        hand.sees("The ledger is empty").await;
+        holds(&driver, &axe, "the empty ledger").await;
+        hand.tap("Add the demo site").await;
+        hand.sees("Filed last").await;
+        for theme in ["Light", "Dark", "High contrast"] {
+            hand.go("#/appearance").await;
+            hand.tap(theme).await;
+            every_screen(&driver, &hand, &axe).await;
+        }
+        driver.close().await;
+    });
+}
+
+#[test]
+fn a_phones_screens_break_no_rule() {
+    look(json!({ "width": 390, "height": 844, "pixelRatio": 2, "touch": true, "mobile": true }));
+}
+
+#[test]
+fn a_desktops_screens_break_no_rule() {
+    look(json!({ "width": 1280, "height": 800, "pixelRatio": 1, "touch": false, "mobile": false }));
+}

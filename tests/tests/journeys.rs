@@ -1,0 +1,128 @@
+//! Journeys through the real app: the window over WebDriver, and the same screens in Chromium with a phone's shape.
+//! Both type real readings, read what a person sees, file, close, open again and find it.
+
+#![expect(clippy::unwrap_used, reason = "what fails here fails the test")]
+
+use std::path::Path;
+
+use dewledger_tests::{Driver, Hand, has_chromium};
+
+/// Types two states and a flow in mixed units, reads the result, files it under a new site.
+async fn types_and_files(hand: &Hand) {
+    hand.sees("The ledger is empty").await;
+    hand.tap("Start a check").await;
+    hand.tap("How much heat and water").await;
+    hand.sees("Heat moved by the air").await;
+    hand.type_into("pressure.elevation", "1609 m").await;
+    hand.type_into("entering.dry_bulb", "80 F").await;
+    hand.type_into("entering.wet_bulb", "62 F").await;
+    hand.type_into("leaving.dry_bulb", "12,7778").await;
+    hand.type_into("leaving.wet_bulb", "53 F").await;
+    hand.sees("waits for the air flow").await;
+    hand.type_into("flow.rate", "10000 cfm").await;
+    hand.choose("flow.basis", "as the air enters").await;
+    // The worked figures stand in the desk's own tests; here is what a person sees of them.
+    hand.sees("Heat removed, total").await;
+    hand.sees("read as 12.8 °C").await;
+    hand.sees("refrigeration tons").await;
+    hand.sees("too high").await;
+    let page = hand.page().await;
+    assert!(page.contains("kW"), "{page}");
+    hand.tap("File").await;
+    hand.sees("Where is this?").await;
+}
+
+/// The app is opened again: the entry is there, as typed.
+async fn finds_it_again(hand: &Hand) {
+    hand.sees("Heat moved by the air").await;
+    hand.sees("Invented works").await;
+    hand.tap("Heat moved by the air").await;
+    hand.sees("Entering air, dry bulb").await;
+    let page = hand.page().await;
+    assert!(
+        page.contains("80 F") && page.contains("10000 cfm") && page.contains("12,7778"),
+        "{page}"
+    );
+    assert!(page.contains("Heat removed, total"), "{page}");
+}
+
+/// Fills the sheet that asks where it was, with a site that is added on the spot.
+async fn names_the_site(hand: &Hand) {
+    hand.type_at("add-name", "Invented works").await;
+    hand.type_at("add-elevation", "1609 m").await;
+    hand.tap("Add the site").await;
+    hand.tap("File it").await;
+    hand.sees("Filed ").await;
+}
+
+fn folder() -> tempfile::TempDir {
+    tempfile::tempdir().unwrap()
+}
+
+fn ledger(folder: &Path) -> std::path::PathBuf {
+    folder.join("ledger.dewledger")
+}
+
+fn run(journey: impl std::future::Future<Output = ()>) {
+    let runtime = tokio::runtime::Builder::new_current_thread().enable_all().build().unwrap();
+    runtime.block_on(async {
+        let bounded = tokio::time::timeout(std::time::Duration::from_secs(240), journey).await;
+        assert!(bounded.is_ok(), "the journey took more than four minutes");
+    });
+}
+
+#[test]
+fn a_check_is_typed_filed_and_found_again_in_the_window() {
+    run(async {
+        let folder = folder();
+        let driver = Driver::window(folder.path(), &ledger(folder.path())).await;
+        let hand = Hand::new(&driver.client);
+        types_and_files(&hand).await;
+        names_the_site(&hand).await;
+        driver.close().await;
+        let driver = Driver::window(folder.path(), &ledger(folder.path())).await;
+        finds_it_again(&Hand::new(&driver.client)).await;
+        driver.close().await;
+    });
+}
+
+#[test]
+fn a_check_is_typed_filed_and_found_again_on_a_phones_screen() {
+    if !has_chromium() {
+        return;
+    }
+    run(async {
+        let folder = folder();
+        let driver = Driver::phone(folder.path(), &ledger(folder.path())).await;
+        let hand = Hand::new(&driver.client);
+        types_and_files(&hand).await;
+        names_the_site(&hand).await;
+        driver.close().await;
+        let driver = Driver::phone(folder.path(), &ledger(folder.path())).await;
+        finds_it_again(&Hand::new(&driver.client)).await;
+        driver.close().await;
+    });
+}
+
+#[test]
+fn a_half_typed_form_survives_the_program_being_killed() {
+    if !has_chromium() {
+        return;
+    }
+    run(async {
+        let folder = folder();
+        let driver = Driver::phone(folder.path(), &ledger(folder.path())).await;
+        let hand = Hand::new(&driver.client);
+        hand.go("#/check/air_state").await;
+        hand.type_into("air.dry_bulb", "24,1").await;
+        hand.sees("read as 24.1 °C").await;
+        hand.sees("draft kept").await;
+        driver.kill();
+        let driver = Driver::phone(folder.path(), &ledger(folder.path())).await;
+        let hand = Hand::new(&driver.client);
+        hand.sees("Not finished").await;
+        hand.tap("Continue").await;
+        hand.sees("read as 24.1 °C").await;
+        driver.close().await;
+    });
+}
