@@ -2,6 +2,7 @@
 
 use rusqlite::{OptionalExtension, Row, params};
 
+use crate::record::text;
 use crate::{At, DraftId, Ledger, WriteError, id};
 
 /// A kept draft.
@@ -21,11 +22,15 @@ pub struct Draft {
 const BROUGHT_BACK_WITHIN: i64 = 24 * 3600 * 1000;
 
 fn draft(row: &Row<'_>) -> rusqlite::Result<Draft> {
-    let text: String = row.get(0)?;
-    let id = id::parse(&text).map_err(|error| {
+    let id = id::parse(&row.get::<_, String>(0)?).map_err(|error| {
         rusqlite::Error::FromSqlConversionFailure(0, rusqlite::types::Type::Text, Box::new(error))
     })?;
-    Ok(Draft { id: DraftId::of(id), kept_ms: row.get(1)?, title: row.get(2)?, text: row.get(3)? })
+    Ok(Draft {
+        id: DraftId::of(id),
+        kept_ms: row.get(1)?,
+        title: text(row, 2)?,
+        text: text(row, 3)?,
+    })
 }
 
 impl Ledger {

@@ -2,7 +2,7 @@
 
 use std::path::PathBuf;
 
-/// Why the ledger could not be opened. Nothing was written.
+/// Why the ledger could not be opened. What was in it is as it was.
 #[derive(Debug, thiserror::Error)]
 pub enum OpenError {
     /// A file of another program.
@@ -22,6 +22,26 @@ pub enum OpenError {
         found: i64,
         /// The newest schema that this version knows.
         known: i64,
+    },
+    /// Another process is opening it, or has it open while it needs mending.
+    #[error("{} is in use by another program of this app; close that one and try again", .path.display())]
+    InUse {
+        /// The file.
+        path: PathBuf,
+    },
+    /// It is of an older schema and could not be brought up to date.
+    #[error("the ledger could not be brought up to schema {number}: {source}")]
+    Migration {
+        /// The schema that was not reached.
+        number: i64,
+        /// Why.
+        source: rusqlite::Error,
+    },
+    /// Bringing it up to date would have left rows that name others that are not there.
+    #[error("the ledger could not be brought up to schema {number}: rows would be left dangling")]
+    Dangling {
+        /// The schema that was not reached.
+        number: i64,
     },
     /// The folder or file cannot be read or written.
     #[error("{} cannot be opened: {source}", .path.display())]

@@ -1,20 +1,25 @@
-//! Opening the ledger: settings, refusals, setting a damaged file aside.
+//! Opening the ledger: the life of its file, and the settings of every connection.
 
 use std::path::{Path, PathBuf};
 use std::time::Duration;
 
-use rusqlite::{Connection, OpenFlags, OptionalExtension};
+use rusqlite::{Connection, OptionalExtension};
 
+use crate::beside::{self, CopyError, Incoming, copy_aside, copy_whole};
+use crate::look::{Found, glance, look, sound};
 use crate::salvage::{Salvaged, carry_over};
-use crate::schema::{APPLICATION_ID, SCHEMA, migrate, version};
+use crate::schema::{SCHEMA, migrate};
+use crate::turn::Turn;
 use crate::{At, OpenError, WriteError, id};
 
-/// An open ledger. One writer; other processes may read and take turns writing.
+/// An open ledger. Other processes may have it open too; they take turns writing.
 #[derive(Debug)]
 pub struct Ledger {
+    // Before the turn: fields are dropped in this order, and the file is closed before others may set it aside.
     pub(crate) connection: Connection,
     pub(crate) device: String,
     path: PathBuf,
+    _turn: Turn,
 }
 
 /// An opened ledger and what happened on the way.
@@ -47,48 +52,70 @@ pub enum Event {
     },
 }
 
-/// Copies of older schemas that are kept.
-const COPIES: usize = 3;
-
 impl Ledger {
-    /// Opens the ledger at `path`, or makes one.
+    /// Opens the ledger at `path`, or makes one, with its folder.
+    ///
+    /// A damaged one is set aside, and so are an empty file and a log of changes whose ledger is gone: a ledger never
+    /// starts empty in the place of another without saying so.
     ///
     /// # Errors
     ///
-    /// [`OpenError`] where the file is another program's, newer, or cannot be opened; it is left as it is then.
+    /// [`OpenError`] where the file is another program's, newer, in use, or cannot be opened; what was in it is as it
+    /// was then.
     pub fn open(path: &Path, now: At) -> Result<Opened, OpenError> {
-        let disk = |source| OpenError::Disk { path: path.to_owned(), source };
+        // Refused before anything is made beside it.
+        glance(path)?;
         if let Some(folder) = path.parent() {
-            std::fs::create_dir_all(folder).map_err(disk)?;
+            std::fs::create_dir_all(folder)
+                .map_err(|source| OpenError::Disk { path: path.to_owned(), source })?;
         }
-        let there = std::fs::metadata(path).is_ok_and(|file| file.len() > 0);
-        if !there {
-            return Ok(Opened { ledger: Self::ready(path, now)?, event: Event::Fresh });
+        let turn = Turn::wait_for(path)?;
+        if turn.alone
+            && let Some(incoming) = Incoming::left_behind(path)?
+        {
+            return Self::finish(incoming, path, now, turn);
         }
-        match look(path)? {
+        let found = look(path)?;
+        if !turn.alone && found != (Found::Sound { schema: SCHEMA }) {
+            // Whoever has it open would go on writing to a file that was moved.
+            return Err(OpenError::InUse { path: path.to_owned() });
+        }
+        let event = match found {
             Found::Sound { schema } if schema < SCHEMA => {
-                let copy = copy_aside(path, schema, now)?;
-                Ok(Opened { ledger: Self::ready(path, now)?, event: Event::Migrated { copy } })
+                Event::Migrated { copy: copy_aside(path, schema, now)? }
             }
-            Found::Sound { .. } => {
-                Ok(Opened { ledger: Self::ready(path, now)?, event: Event::Existing })
+            Found::Sound { .. } => Event::Existing,
+            Found::Nothing => {
+                let incoming = Incoming::begin(path, now)?;
+                built(&incoming.built, now)?;
+                incoming.swap(path)?;
+                Event::Fresh
             }
             Found::Damaged => {
-                let damaged = set_aside(path, now)?;
-                let mut ledger = Self::ready(path, now)?;
-                let salvaged = carry_over(&damaged, &mut ledger.connection);
-                Ok(Opened { ledger, event: Event::SetAside { damaged, salvaged } })
+                let incoming = Incoming::begin(path, now)?;
+                let mut connection = connect(&incoming.built)?;
+                carry_over(path, &mut connection)?;
+                drop(connection);
+                built(&incoming.built, now)?;
+                return Self::finish(incoming, path, now, turn);
             }
-        }
+        };
+        Ok(Opened { ledger: Self::ready(path, now, turn)?, event })
     }
 
-    /// Opens for writing, with every setting, at the schema of this version.
-    fn ready(path: &Path, now: At) -> Result<Self, OpenError> {
-        let mut connection = Connection::open(path)?;
-        settings(&connection)?;
-        migrate(&mut connection)?;
+    /// The last step of setting a damaged file aside, which a kill may have interrupted before.
+    fn finish(incoming: Incoming, path: &Path, now: At, turn: Turn) -> Result<Opened, OpenError> {
+        let damaged = incoming.swap(path)?;
+        let ledger = Self::ready(path, now, turn)?;
+        let salvaged = Salvaged::count(&ledger.connection)?;
+        Ok(Opened { ledger, event: Event::SetAside { damaged, salvaged } })
+    }
+
+    fn ready(path: &Path, now: At, mut turn: Turn) -> Result<Self, OpenError> {
+        let connection = connect(path)?;
         let device = device(&connection, now)?;
-        Ok(Self { connection, device, path: path.to_owned() })
+        turn.share();
+        Ok(Self { connection, device, path: path.to_owned(), _turn: turn })
     }
 
     /// Where it is.
@@ -97,29 +124,45 @@ impl Ledger {
         &self.path
     }
 
+    /// The identity of this ledger among others, made once.
+    #[must_use]
+    pub fn device(&self) -> &str {
+        &self.device
+    }
+
     /// Brings everything from the write-ahead log into the file, so that a copy of the file alone is whole.
     ///
     /// # Errors
     ///
-    /// [`WriteError`] where the disk refuses.
+    /// [`WriteError`] where the disk refuses, [`WriteError::Busy`] where another process is reading or writing.
     pub fn checkpoint(&self) -> Result<(), WriteError> {
-        self.connection.query_row("PRAGMA wal_checkpoint(TRUNCATE)", [], |_| Ok(()))?;
-        Ok(())
+        let busy: bool =
+            self.connection.query_row("PRAGMA wal_checkpoint(TRUNCATE)", [], |row| row.get(0))?;
+        if busy { Err(WriteError::Busy) } else { Ok(()) }
     }
 
-    /// Writes a sound copy of the whole ledger to a new file and checks it.
+    /// Writes a sound copy of the whole ledger to a new file and checks it. The ledger is checked first. Nothing stands at `to` unless it is whole.
     ///
     /// # Errors
     ///
-    /// [`WriteError`] where the file exists already or the disk refuses.
+    /// [`WriteError`] where the file exists already, the ledger is not sound or the disk refuses.
     pub fn back_up(&self, to: &Path) -> Result<(), WriteError> {
-        self.connection.execute("VACUUM INTO ?1", [to.to_string_lossy()])?;
-        let copy = Connection::open_with_flags(to, OpenFlags::SQLITE_OPEN_READ_ONLY)?;
-        if sound(&copy)? {
-            Ok(())
-        } else {
-            Err(WriteError::NotFound { what: "a sound copy".to_owned() })
+        if !sound(&self.connection)? {
+            return Err(WriteError::Sql(refusal(
+                rusqlite::ffi::SQLITE_CORRUPT,
+                "the ledger is damaged",
+            )));
         }
+        copy_whole(&self.connection, to).map_err(|error| match error {
+            CopyError::Sql(error) => error.into(),
+            CopyError::Disk(error) if error.kind() == std::io::ErrorKind::StorageFull => {
+                WriteError::DiskFull
+            }
+            CopyError::Disk(_) | CopyError::Unsound => {
+                let why = format!("{}: {error}", to.display());
+                WriteError::Sql(refusal(rusqlite::ffi::SQLITE_CANTOPEN, &why))
+            }
+        })
     }
 
     /// Stands in for a full disk: no more pages than this.
@@ -139,111 +182,47 @@ impl Ledger {
     ///
     /// [`WriteError`] where it cannot be read.
     pub fn is_empty(&self) -> Result<bool, WriteError> {
-        let count: i64 =
-            self.connection.query_row("SELECT count(*) FROM record", [], |row| row.get(0))?;
-        Ok(count == 0)
+        Ok(!self.connection.prepare_cached("SELECT 1 FROM revision")?.exists([])?)
     }
+}
+
+fn refusal(code: std::ffi::c_int, why: &str) -> rusqlite::Error {
+    rusqlite::Error::SqliteFailure(rusqlite::ffi::Error::new(code), Some(why.to_owned()))
+}
+
+/// Opens a file for writing, with every setting, at the schema of this version.
+fn connect(path: &Path) -> Result<Connection, OpenError> {
+    let mut connection = Connection::open(path)?;
+    settings(&connection)?;
+    migrate(&mut connection)?;
+    Ok(connection)
+}
+
+/// A whole ledger at `path`, all of it in the one file.
+fn built(path: &Path, now: At) -> Result<(), OpenError> {
+    let connection = connect(path)?;
+    device(&connection, now)?;
+    connection.query_row("PRAGMA wal_checkpoint(TRUNCATE)", [], |_| Ok(()))?;
+    // Closing the last connection removes the log.
+    connection.close().map_err(|(_, error)| error)?;
+    beside::sync_folder(path);
+    Ok(())
 }
 
 /// The settings of every connection; see the crate's documentation for why.
 fn settings(connection: &Connection) -> rusqlite::Result<()> {
     connection.busy_timeout(Duration::from_secs(5))?;
-    connection.pragma_update(None, "journal_mode", "WAL")?;
-    connection.pragma_update(None, "synchronous", "FULL")?;
+    let mode: String =
+        connection.pragma_update_and_check(None, "journal_mode", "WAL", |row| row.get(0))?;
+    connection.pragma_update(None, "synchronous", if mode == "wal" { "FULL" } else { "EXTRA" })?;
+    connection.pragma_update(None, "fullfsync", true)?;
+    connection.pragma_update(None, "checkpoint_fullfsync", true)?;
     connection.pragma_update(None, "foreign_keys", true)?;
     connection.pragma_update(None, "trusted_schema", false)?;
     connection.pragma_update(None, "cell_size_check", true)?;
     connection.pragma_update(None, "mmap_size", 0)?;
     connection.pragma_update(None, "journal_size_limit", 4 * 1024 * 1024)?;
-    // Without it INSERT OR REPLACE deletes behind the back of the delete triggers.
     connection.pragma_update(None, "recursive_triggers", true)
-}
-
-/// What stands at a path.
-enum Found {
-    Sound { schema: i64 },
-    Damaged,
-}
-
-/// Looks without writing. SQLite may need to read its write-ahead log, which a read-only connection can.
-fn look(path: &Path) -> Result<Found, OpenError> {
-    let connection = Connection::open_with_flags(path, OpenFlags::SQLITE_OPEN_READ_ONLY)?;
-    connection.busy_timeout(Duration::from_secs(5))?;
-    let application: rusqlite::Result<i32> =
-        connection.pragma_query_value(None, "application_id", |row| row.get(0));
-    let Ok(application) = application else { return Ok(Found::Damaged) };
-    let Ok(schema) = version(&connection) else { return Ok(Found::Damaged) };
-    let tables =
-        connection.query_row("SELECT count(*) FROM sqlite_schema", [], |row| row.get::<_, i64>(0));
-    let Ok(tables) = tables else { return Ok(Found::Damaged) };
-    if application != APPLICATION_ID {
-        // A kill during the very first opening leaves an empty file of nobody: that one is ours to fill.
-        if application == 0 && schema == 0 && tables == 0 {
-            return Ok(Found::Sound { schema: SCHEMA });
-        }
-        return Err(OpenError::Foreign { path: path.to_owned(), found: application });
-    }
-    if schema > SCHEMA {
-        return Err(OpenError::TooNew { path: path.to_owned(), found: schema, known: SCHEMA });
-    }
-    match sound(&connection) {
-        Ok(true) => Ok(Found::Sound { schema }),
-        _ => Ok(Found::Damaged),
-    }
-}
-
-fn sound(connection: &Connection) -> rusqlite::Result<bool> {
-    connection
-        .query_row("PRAGMA quick_check(1)", [], |row| row.get::<_, String>(0))
-        .map(|says| says == "ok")
-}
-
-fn sibling(path: &Path, prefix: &str, now: At) -> PathBuf {
-    let name = path
-        .file_name()
-        .map_or_else(|| "ledger".to_owned(), |name| name.to_string_lossy().into_owned());
-    path.with_file_name(format!("{prefix}-{}-{name}", now.ms))
-}
-
-/// Renames a damaged file with its log, so that nothing writes to it any more.
-fn set_aside(path: &Path, now: At) -> Result<PathBuf, OpenError> {
-    let damaged = sibling(path, "damaged", now);
-    let disk = |source| OpenError::Disk { path: path.to_owned(), source };
-    std::fs::rename(path, &damaged).map_err(disk)?;
-    for suffix in ["-wal", "-shm"] {
-        let with = |path: &Path| PathBuf::from(format!("{}{suffix}", path.display()));
-        if with(path).exists() {
-            std::fs::rename(with(path), with(&damaged)).map_err(disk)?;
-        }
-    }
-    Ok(damaged)
-}
-
-/// A whole copy of an older schema, before it is migrated; the newest few are kept.
-fn copy_aside(path: &Path, schema: i64, now: At) -> Result<PathBuf, OpenError> {
-    let copy = sibling(path, &format!("schema{schema}"), now);
-    let connection = Connection::open(path)?;
-    connection.execute("VACUUM INTO ?1", [copy.to_string_lossy()])?;
-    if let Some(folder) = path.parent() {
-        let name =
-            path.file_name().map(|name| name.to_string_lossy().into_owned()).unwrap_or_default();
-        let mut copies: Vec<PathBuf> = std::fs::read_dir(folder)
-            .map(|files| files.flatten().map(|file| file.path()).collect())
-            .unwrap_or_default();
-        copies.retain(|file| {
-            let file = file
-                .file_name()
-                .map(|name| name.to_string_lossy().into_owned())
-                .unwrap_or_default();
-            file.starts_with("schema") && file.ends_with(&name)
-        });
-        copies.sort();
-        for old in copies.iter().rev().skip(COPIES) {
-            // A copy that cannot be removed does no harm.
-            let _ = std::fs::remove_file(old);
-        }
-    }
-    Ok(copy)
 }
 
 /// This ledger's device, made once.
@@ -256,4 +235,37 @@ fn device(connection: &Connection, now: At) -> rusqlite::Result<String> {
     let device = id::new(now).hyphenated().to_string();
     connection.execute("INSERT OR IGNORE INTO identity VALUES (1, ?1)", [&device])?;
     connection.query_row("SELECT device FROM identity", [], |row| row.get(0))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn every_setting_is_in_force_after_opening() {
+        let folder = tempfile::tempdir().unwrap();
+        let now = At { ms: 1_780_000_000_000, utc_offset_min: 0 };
+        let ledger = Ledger::open(&folder.path().join("l.dewledger"), now).unwrap().ledger;
+        let ask = |pragma: &str| -> String {
+            let text = |row: &rusqlite::Row<'_>| row.get(0);
+            let sql = format!("SELECT CAST({pragma} AS TEXT) FROM pragma_{pragma}");
+            // Busy_timeout is the one whose column has another name.
+            let sql = sql.replace("CAST(busy_timeout", "CAST(timeout");
+            ledger.connection.query_row(&sql, [], text).unwrap()
+        };
+        for (pragma, value) in [
+            ("journal_mode", "wal"),
+            ("synchronous", "2"),
+            ("fullfsync", "1"),
+            ("checkpoint_fullfsync", "1"),
+            ("foreign_keys", "1"),
+            ("trusted_schema", "0"),
+            ("cell_size_check", "1"),
+            ("busy_timeout", "5000"),
+            ("journal_size_limit", "4194304"),
+            ("recursive_triggers", "1"),
+        ] {
+            assert_eq!(ask(pragma), value, "{pragma}");
+        }
+    }
 }

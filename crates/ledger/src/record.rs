@@ -124,6 +124,8 @@ pub struct Revision {
     pub record: RecordId,
     /// The revision that it replaces.
     pub parent: Option<RevisionId>,
+    /// The ledger that it was written in first: two corrections made apart usually differ in it.
+    pub device: String,
     /// When it was written.
     pub at: At,
     /// It takes the record back.
@@ -148,7 +150,7 @@ pub enum Within {
     Visit(VisitId),
 }
 
-const COLUMNS: &str = "id, record, parent, at_ms, utc_offset_min, withdrawn, invented, site, equipment, visit, title, app_version, body, kind";
+const COLUMNS: &str = "id, record, parent, at_ms, utc_offset_min, withdrawn, invented, site, equipment, visit, title, app_version, body, kind, device";
 
 fn bad(error: BadId) -> rusqlite::Error {
     rusqlite::Error::FromSqlConversionFailure(0, rusqlite::types::Type::Text, Box::new(error))
@@ -162,6 +164,12 @@ fn optional(row: &Row<'_>, column: usize) -> rusqlite::Result<Option<uuid::Uuid>
     row.get::<_, Option<String>>(column)?.map(|text| id::parse(&text).map_err(bad)).transpose()
 }
 
+/// Text as it stands. A byte that the disk flipped is shown as a mark and hides neither the rest of the text nor the
+/// other rows of a list.
+pub(crate) fn text(row: &Row<'_>, column: usize) -> rusqlite::Result<String> {
+    Ok(String::from_utf8_lossy(row.get_ref(column)?.as_bytes()?).into_owned())
+}
+
 fn revision(row: &Row<'_>) -> rusqlite::Result<Revision> {
     let record = uuid(row, 1)?;
     let kind: String = row.get(13)?;
@@ -169,22 +177,24 @@ fn revision(row: &Row<'_>) -> rusqlite::Result<Revision> {
         "site" => RecordId::Site(SiteId::of(record)),
         "equipment" => RecordId::Equipment(EquipmentId::of(record)),
         "visit" => RecordId::Visit(VisitId::of(record)),
-        _ => RecordId::Entry(EntryId::of(record)),
+        "entry" => RecordId::Entry(EntryId::of(record)),
+        other => return Err(bad(BadId { text: format!("{other} {record}") })),
     };
     Ok(Revision {
         id: RevisionId::of(uuid(row, 0)?),
         record,
         parent: optional(row, 2)?.map(RevisionId::of),
+        device: row.get(14)?,
         at: At { ms: row.get(3)?, utc_offset_min: row.get(4)? },
         withdrawn: row.get(5)?,
         body: Body {
             site: optional(row, 7)?.map(SiteId::of),
             equipment: optional(row, 8)?.map(EquipmentId::of),
             visit: optional(row, 9)?.map(VisitId::of),
-            title: row.get(10)?,
+            title: text(row, 10)?,
             invented: row.get(6)?,
-            app_version: row.get(11)?,
-            text: row.get(12)?,
+            app_version: text(row, 11)?,
+            text: text(row, 12)?,
             results: Vec::new(),
         },
     })
@@ -203,14 +213,14 @@ impl Ledger {
         body: &Body,
         from: Option<DraftId>,
     ) -> Result<Revision, WriteError> {
-        self.write(RecordId::new(kind, at), true, None, at, false, body, from)
+        self.write(RecordId::new(kind, at), None, at, false, body, from)
     }
 
     /// Writes a further revision of a record, replacing `parent`. Returns after the commit.
     ///
     /// # Errors
     ///
-    /// [`WriteError`]; nothing is stored then.
+    /// [`WriteError`], [`WriteError::NotFound`] where `parent` is not in this ledger; nothing is stored then.
     pub fn revise(
         &mut self,
         parent: &Revision,
@@ -218,7 +228,7 @@ impl Ledger {
         body: &Body,
         from: Option<DraftId>,
     ) -> Result<Revision, WriteError> {
-        self.write(parent.record, false, Some(parent.id), at, false, body, from)
+        self.write(parent.record, Some(parent.id), at, false, body, from)
     }
 
     /// Takes a record back, or brings it back: a revision that says so. Nothing is erased.
@@ -234,14 +244,13 @@ impl Ledger {
     ) -> Result<Revision, WriteError> {
         let results = self.results(parent.id)?;
         let body = Body { results, ..parent.body.clone() };
-        self.write(parent.record, false, Some(parent.id), at, withdrawn, &body, None)
+        self.write(parent.record, Some(parent.id), at, withdrawn, &body, None)
     }
 
-    #[expect(clippy::too_many_arguments, reason = "the one place that writes a revision, private")]
+    /// The one place that writes a revision.
     fn write(
         &mut self,
         record: RecordId,
-        new: bool,
         parent: Option<RevisionId>,
         at: At,
         withdrawn: bool,
@@ -252,17 +261,20 @@ impl Ledger {
         let device = self.device.clone();
         let transaction =
             self.connection.transaction_with_behavior(TransactionBehavior::Immediate)?;
-        if new {
-            transaction.execute(
-                "INSERT INTO record VALUES (?1, ?2)",
-                params![record.text(), record.kind().text()],
-            )?;
+        if let Some(parent) = parent {
+            let here = "SELECT 1 FROM revision WHERE id = ?1 AND record = ?2";
+            if !transaction.prepare_cached(here)?.exists([parent.to_string(), record.text()])? {
+                return Err(WriteError::NotFound {
+                    what: format!("{} {record}", record.kind().text()),
+                });
+            }
         }
         transaction.execute(
-            "INSERT INTO revision VALUES (?1, ?2, ?3, ?4, ?5, ?6, ?7, ?8, ?9, ?10, ?11, ?12, ?13, ?14)",
+            "INSERT INTO revision VALUES (?1, ?2, ?3, ?4, ?5, ?6, ?7, ?8, ?9, ?10, ?11, ?12, ?13, ?14, ?15)",
             params![
                 id.to_string(),
                 record.text(),
+                record.kind().text(),
                 parent.map(|parent| parent.to_string()),
                 device,
                 at.ms,
@@ -297,6 +309,7 @@ impl Ledger {
             id,
             record,
             parent,
+            device,
             at,
             withdrawn,
             body: Body { results: Vec::new(), ..body.clone() },
@@ -336,10 +349,7 @@ impl Ledger {
     ///
     /// [`WriteError`] where it cannot be read.
     pub fn history(&self, record: RecordId) -> Result<Vec<Revision>, WriteError> {
-        let sql = format!(
-            "SELECT {} FROM revision JOIN record ON record.id = revision.record WHERE record = ?1 ORDER BY at_ms, revision.id",
-            COLUMNS.replace("id, record, parent", "revision.id, record, parent")
-        );
+        let sql = format!("SELECT {COLUMNS} FROM revision WHERE record = ?1 ORDER BY at_ms, id");
         let mut left = self.select(&sql, [record.text()])?;
         let mut ordered: Vec<Revision> = Vec::with_capacity(left.len());
         while !left.is_empty() {
@@ -361,17 +371,28 @@ impl Ledger {
     ///
     /// [`WriteError`] where it cannot be read.
     pub fn list(&self, kind: Kind, within: Within) -> Result<Vec<Head>, WriteError> {
+        self.newest(kind, within, u32::MAX)
+    }
+
+    /// As [`Ledger::list`], but no more than `count` of them: a first screen need not read a ledger of years.
+    ///
+    /// # Errors
+    ///
+    /// [`WriteError`] where it cannot be read.
+    pub fn newest(&self, kind: Kind, within: Within, count: u32) -> Result<Vec<Head>, WriteError> {
+        // The plus keeps SQLite from taking the index of kinds where a place narrows far better.
         let (clause, id) = match within {
-            Within::Everything => ("?1 = ''", String::new()),
-            Within::Site(site) => ("site = ?1", site.to_string()),
-            Within::Equipment(equipment) => ("equipment = ?1", equipment.to_string()),
-            Within::Visit(visit) => ("visit = ?1", visit.to_string()),
+            Within::Everything => ("kind = ?1 AND ?2 = ''", String::new()),
+            Within::Site(site) => ("+kind = ?1 AND site = ?2", site.to_string()),
+            Within::Equipment(equipment) => {
+                ("+kind = ?1 AND equipment = ?2", equipment.to_string())
+            }
+            Within::Visit(visit) => ("+kind = ?1 AND visit = ?2", visit.to_string()),
         };
-        let kind = kind.text();
         let sql = format!(
-            "SELECT {COLUMNS} FROM head WHERE kind = '{kind}' AND {clause} ORDER BY record DESC, at_ms DESC, id DESC"
+            "SELECT {COLUMNS} FROM head WHERE {clause} ORDER BY record DESC, at_ms DESC, id DESC LIMIT ?3"
         );
-        self.select(&sql, [id])
+        self.select(&sql, params![kind.text(), id, count])
     }
 
     fn select(
@@ -395,8 +416,8 @@ impl Ledger {
         )?;
         let row = |row: &Row<'_>| {
             Ok(ResultRow {
-                key: row.get(0)?,
-                quantity: row.get(1)?,
+                key: text(row, 0)?,
+                quantity: text(row, 1)?,
                 si: row.get(2)?,
                 half_width_si: row.get(3)?,
             })

@@ -2,36 +2,14 @@
 
 #![expect(clippy::unwrap_used, reason = "what fails here fails the test")]
 
-use std::path::{Path, PathBuf};
+mod common;
 
+use common::{at, body, folder, open};
 use dewledger_ledger::{
-    APPLICATION_ID, At, Body, Event, Kind, Ledger, OpenError, RecordId, ResultRow, SCHEMA, Within,
+    APPLICATION_ID, Body, Event, Kind, Ledger, OpenError, RecordId, ResultRow, SCHEMA, Within,
     WriteError,
 };
 use rusqlite::Connection;
-
-fn at(ms: i64) -> At {
-    At { ms: 1_780_000_000_000 + ms, utc_offset_min: 120 }
-}
-
-fn open(path: &Path) -> Ledger {
-    Ledger::open(path, at(0)).unwrap().ledger
-}
-
-fn body(title: &str) -> Body {
-    Body {
-        title: title.to_owned(),
-        text: "{}".to_owned(),
-        app_version: "0".to_owned(),
-        ..Body::default()
-    }
-}
-
-fn folder() -> (tempfile::TempDir, PathBuf) {
-    let folder = tempfile::tempdir().unwrap();
-    let path = folder.path().join("db").join("ledger.dewledger");
-    (folder, path)
-}
 
 #[test]
 fn a_fresh_ledger_says_what_it_is() {
@@ -56,13 +34,12 @@ fn a_fresh_ledger_says_what_it_is() {
 
 #[test]
 fn newer_and_foreign_files_are_refused_and_left_as_they_are() {
+    let newer = format!(
+        "PRAGMA application_id = {APPLICATION_ID}; PRAGMA user_version = 999; CREATE TABLE t (a)"
+    );
     for (name, sql) in [
-        (
-            "newer",
-            format!(
-                "PRAGMA application_id = {APPLICATION_ID}; PRAGMA user_version = 999; CREATE TABLE t (a)"
-            ),
-        ),
+        ("newer", newer.clone()),
+        ("newer, with a log", format!("PRAGMA journal_mode = WAL; {newer}")),
         ("foreign", "PRAGMA application_id = 12345; CREATE TABLE t (a)".to_owned()),
         ("nameless", "CREATE TABLE t (a)".to_owned()),
     ] {
@@ -71,12 +48,37 @@ fn newer_and_foreign_files_are_refused_and_left_as_they_are() {
         Connection::open(&path).unwrap().execute_batch(&sql).unwrap();
         let before = std::fs::read(&path).unwrap();
         let error = Ledger::open(&path, at(0)).unwrap_err();
-        match name {
-            "newer" => assert!(matches!(error, OpenError::TooNew { found: 999, .. }), "{error}"),
-            _ => assert!(matches!(error, OpenError::Foreign { .. }), "{error}"),
+        if name.starts_with("newer") {
+            assert!(matches!(error, OpenError::TooNew { found: 999, .. }), "{error}");
+        } else {
+            assert!(matches!(error, OpenError::Foreign { .. }), "{error}");
         }
         assert_eq!(std::fs::read(&path).unwrap(), before, "{name} was touched");
+        assert_eq!(std::fs::read_dir(path.parent().unwrap()).unwrap().count(), 1, "{name}");
     }
+}
+
+#[test]
+fn a_newer_schema_that_stands_in_the_log_only_is_refused_too() {
+    let (_folder, path) = folder();
+    drop(open(&path));
+    let connection = Connection::open(&path).unwrap();
+    connection.pragma_update(None, "user_version", 999).unwrap();
+    let before = std::fs::read(&path).unwrap();
+    let error = Ledger::open(&path, at(0)).unwrap_err();
+    assert!(matches!(error, OpenError::TooNew { found: 999, .. }), "{error}");
+    assert_eq!(std::fs::read(&path).unwrap(), before);
+}
+
+#[test]
+fn a_file_that_is_no_database_is_not_moved() {
+    let (folder, _) = folder();
+    let path = folder.path().join("letter.txt");
+    std::fs::write(&path, "Dear owner, the coil moves 20 tons.").unwrap();
+    let error = Ledger::open(&path, at(0)).unwrap_err();
+    assert!(matches!(error, OpenError::Foreign { .. }), "{error}");
+    assert_eq!(std::fs::read_to_string(&path).unwrap(), "Dear owner, the coil moves 20 tons.");
+    assert_eq!(std::fs::read_dir(folder.path()).unwrap().count(), 1);
 }
 
 #[test]
@@ -97,8 +99,7 @@ fn what_is_filed_cannot_be_changed_behind_its_back() {
         "UPDATE revision SET title = 'other'",
         "DELETE FROM revision",
         "INSERT OR REPLACE INTO revision SELECT * FROM revision",
-        "UPDATE record SET kind = 'site'",
-        "DELETE FROM record",
+        "INSERT OR REPLACE INTO result SELECT * FROM result",
         "UPDATE result SET si = 2.0",
         "DELETE FROM result",
     ] {
@@ -178,31 +179,101 @@ fn lists_know_where_things_belong() {
     }
     let here = ledger.list(Kind::Equipment, Within::Site(site)).unwrap();
     assert_eq!(here.len(), 2);
-    assert_eq!(ledger.list(Kind::Equipment, Within::Everything).unwrap().len(), 3);
+    let all = ledger.list(Kind::Equipment, Within::Everything).unwrap();
+    assert_eq!(all.len(), 3);
+    assert_eq!(ledger.newest(Kind::Equipment, Within::Everything, 2).unwrap(), all[..2]);
 }
 
 #[test]
-fn a_full_disk_is_said_and_a_later_save_works() {
+fn revising_what_is_not_here_is_refused() {
+    let (_folder, path) = folder();
+    let (_other_folder, other_path) = folder();
+    let elsewhere = open(&other_path).file(Kind::Entry, at(1), &body("elsewhere"), None).unwrap();
+    let mut ledger = open(&path);
+    let error = ledger.revise(&elsewhere, at(2), &body("correction"), None).unwrap_err();
+    assert!(matches!(error, WriteError::NotFound { .. }), "{error}");
+    assert!(ledger.is_empty().unwrap());
+}
+
+#[test]
+fn the_schema_refuses_what_makes_no_sense() {
     let (_folder, path) = folder();
     let mut ledger = open(&path);
-    ledger.checkpoint().unwrap();
+    let draft = ledger.keep_draft(None, at(0), "half", "text").unwrap();
+    let mut endless = body("entry");
+    let row =
+        |si| ResultRow { key: "total_w".into(), quantity: "power".into(), si, half_width_si: None };
+    for si in [f64::NAN, f64::INFINITY, f64::NEG_INFINITY] {
+        endless.results = vec![row(1.0), row(si)];
+        endless.results[0].key = "sensible_w".into();
+        ledger.file(Kind::Entry, at(1), &endless, Some(draft)).unwrap_err();
+    }
+    assert!(ledger.is_empty().unwrap(), "nothing of a refused entry is stored");
+    assert_eq!(ledger.drafts().unwrap().len(), 1, "and its draft is still there");
+
+    let first = ledger.file(Kind::Entry, at(1), &body("entry"), None).unwrap();
     let connection = Connection::open(&path).unwrap();
-    let pages: i64 = connection.pragma_query_value(None, "page_count", |row| row.get(0)).unwrap();
-    drop(connection);
-    ledger.limit_pages_for_tests(pages + 1).unwrap();
-    let large = Body { text: "x".repeat(200_000), ..body("large") };
-    let error = ledger.file(Kind::Entry, at(1), &large, None).unwrap_err();
-    assert!(matches!(error, WriteError::DiskFull), "{error}");
-    assert!(ledger.list(Kind::Entry, Within::Everything).unwrap().is_empty());
-    ledger.limit_pages_for_tests(1_000_000).unwrap();
-    ledger.file(Kind::Entry, at(2), &large, None).unwrap();
-    assert_eq!(ledger.list(Kind::Entry, Within::Everything).unwrap().len(), 1);
+    let copy = |id: &str, record: &str, kind: &str, parent: &str| {
+        format!(
+            "INSERT INTO revision SELECT {id}, {record}, {kind}, {parent}, device, at_ms, utc_offset_min, withdrawn, invented, site, equipment, visit, title, app_version, body FROM revision WHERE id = '{}'",
+            first.id
+        )
+    };
+    let fresh = "'01890000-0000-7000-8000-000000000000'";
+    for (sql, why) in [
+        (copy(fresh, "record", "'site'", "id"), "one kind"),
+        (copy(fresh, fresh, "kind", "id"), "same record"),
+        (copy(fresh, "record", "kind", fresh), "CHECK"),
+        (copy("id", "record", "kind", "NULL"), "UNIQUE"),
+        (copy(fresh, "'short'", "kind", "NULL"), "CHECK"),
+    ] {
+        let error = connection.execute(&sql, []).unwrap_err().to_string();
+        assert!(error.contains(why), "{sql}: {error}");
+    }
+    connection.execute(&copy(fresh, "record", "kind", "id"), []).unwrap();
+    assert_eq!(ledger.head(first.record).unwrap().parent, Some(first.id));
+}
+
+#[test]
+fn a_full_disk_at_any_page_is_said_and_a_later_save_works() {
+    let mut refused = 0;
+    for room in 0..55 {
+        let (_folder, path) = folder();
+        let mut ledger = open(&path);
+        let draft = ledger.keep_draft(None, at(0), "half", "typed").unwrap();
+        ledger.checkpoint().unwrap();
+        let connection = Connection::open(&path).unwrap();
+        let pages: i64 =
+            connection.pragma_query_value(None, "page_count", |row| row.get(0)).unwrap();
+        drop(connection);
+        ledger.limit_pages_for_tests(pages + room).unwrap();
+        let large = Body { text: "x".repeat(100_000), ..body("large") };
+        let typed = "y".repeat(100_000);
+        let kept = ledger.keep_draft(Some(draft), at(1), "half", &typed);
+        let filed = ledger.file(Kind::Entry, at(2), &large, Some(draft));
+        for error in [kept.as_ref().err(), filed.as_ref().err()].into_iter().flatten() {
+            assert!(matches!(error, WriteError::DiskFull), "{error}");
+            refused += 1;
+        }
+        let entries = ledger.list(Kind::Entry, Within::Everything).unwrap().len();
+        assert_eq!(entries, usize::from(filed.is_ok()), "filed or not, never half");
+        if filed.is_err() {
+            let text = ledger.draft(draft).unwrap().text;
+            assert_eq!(text, if kept.is_ok() { &typed } else { "typed" });
+            ledger.limit_pages_for_tests(1_000_000).unwrap();
+            ledger.file(Kind::Entry, at(3), &large, Some(draft)).unwrap();
+        }
+        assert!(ledger.drafts().unwrap().is_empty());
+        assert_eq!(ledger.list(Kind::Entry, Within::Everything).unwrap()[0].body.text, large.text);
+    }
+    assert!((30..110).contains(&refused), "{refused} of 110 saves did not fit");
 }
 
 #[test]
 fn two_programs_take_turns() {
     let (_folder, path) = folder();
     let (mut one, mut other) = (open(&path), open(&path));
+    assert_eq!(one.device(), other.device());
     for turn in 0..20 {
         one.file(Kind::Entry, at(turn), &body("one"), None).unwrap();
         other.file(Kind::Entry, at(turn), &body("other"), None).unwrap();
@@ -211,51 +282,23 @@ fn two_programs_take_turns() {
 }
 
 #[test]
-fn a_damaged_file_is_opened_sound_or_set_aside() {
+fn many_that_open_and_write_at_once_lose_nothing() {
     let (_folder, path) = folder();
-    let mut ledger = open(&path);
-    for number in 0..60 {
-        let entry = Body { text: format!("{{\"n\":{number}}}").repeat(40), ..body("entry") };
-        ledger.file(Kind::Entry, at(number), &entry, None).unwrap();
-    }
-    ledger.checkpoint().unwrap();
-    drop(ledger);
-    let whole = std::fs::read(&path).unwrap();
-    let (mut sound, mut aside, mut carried) = (0, 0, 0);
-    // Truncations at every other page, and bytes flipped all over the file.
-    let truncated = (1..whole.len() / 4096).step_by(2).map(|pages| whole[..pages * 4096].to_vec());
-    let flipped = (0..240).map(|case: usize| {
-        let mut bytes = whole.clone();
-        let place = (case * 7919 + 13) % bytes.len();
-        bytes[place] ^= 0x5a;
-        bytes
-    });
-    for bytes in truncated.chain(flipped) {
-        let (_folder, path) = folder();
-        std::fs::create_dir_all(path.parent().unwrap()).unwrap();
-        std::fs::write(&path, &bytes).unwrap();
-        match Ledger::open(&path, at(100)) {
-            Ok(opened) => match opened.event {
-                Event::SetAside { damaged, salvaged } => {
-                    assert_eq!(
-                        std::fs::read(&damaged).unwrap(),
-                        bytes,
-                        "the damaged file is kept as it was"
-                    );
-                    aside += 1;
-                    carried += salvaged.revisions;
-                    opened.ledger.list(Kind::Entry, Within::Everything).unwrap();
+    let start = std::sync::Barrier::new(8);
+    std::thread::scope(|scope| {
+        for _ in 0..8 {
+            scope.spawn(|| {
+                start.wait();
+                let opened = Ledger::open(&path, at(0)).unwrap();
+                assert!(matches!(opened.event, Event::Fresh | Event::Existing));
+                let mut ledger = opened.ledger;
+                for turn in 0..10 {
+                    ledger.file(Kind::Entry, at(turn), &body("entry"), None).unwrap();
                 }
-                Event::Fresh | Event::Existing | Event::Migrated { .. } => sound += 1,
-            },
-            // The header itself may say that it is another program's, newer, or no database: refused, untouched.
-            Err(_) => assert_eq!(std::fs::read(&path).unwrap(), bytes),
+            });
         }
-    }
-    assert!(
-        sound > 0 && aside > 20 && carried > 100,
-        "{sound} sound, {aside} set aside, {carried} rows carried over"
-    );
+    });
+    assert_eq!(open(&path).list(Kind::Entry, Within::Everything).unwrap().len(), 80);
 }
 
 #[test]
@@ -266,5 +309,15 @@ fn a_backup_is_whole() {
     let copy = folder.path().join("copy.dewledger");
     ledger.back_up(&copy).unwrap();
     assert_eq!(open(&copy).list(Kind::Entry, Within::Everything).unwrap().len(), 1);
+    let before = std::fs::read(&copy).unwrap();
     assert!(ledger.back_up(&copy).is_err(), "a copy is never written over");
+    assert_eq!(std::fs::read(&copy).unwrap(), before);
+    let nowhere = folder.path().join("no such folder").join("copy.dewledger");
+    assert!(ledger.back_up(&nowhere).is_err());
+    let left: Vec<_> = std::fs::read_dir(folder.path())
+        .unwrap()
+        .map(|file| file.unwrap().file_name().into_string().unwrap())
+        .filter(|name| name.ends_with("-half"))
+        .collect();
+    assert!(left.is_empty(), "{left:?}");
 }
