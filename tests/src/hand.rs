@@ -14,7 +14,7 @@ pub struct Hand {
     client: Client,
 }
 
-/// A text as an XPath literal; none of the tests' texts holds both kinds of quotation mark.
+/// A text as a literal of the path language; none of the tests' texts holds both kinds of quotation mark.
 fn literal(text: &str) -> String {
     if text.contains('\'') { format!("\"{text}\"") } else { format!("'{text}'") }
 }

@@ -81,6 +81,17 @@ fn look(shape: Value) {
             hand.tap(theme).await;
             every_screen(&driver, &hand, &axe).await;
         }
+        // The rules do find what is wrong: a picture without words.
+        driver
+            .client
+            .execute(
+                "document.querySelector('main').append(document.createElement('img'));",
+                Vec::new(),
+            )
+            .await
+            .unwrap();
+        let found: Value = driver.client.execute_async(RUN, Vec::new()).await.unwrap();
+        assert!(found.to_string().contains("image-alt"), "{found}");
         driver.close().await;
     });
 }

@@ -1,8 +1,6 @@
 //! An open data set through `dewledger air`: hourly weather of three airports, compared with the dew points that the
 //! command was not given. Data and source: `tests/reference/README.md`.
 
-#![expect(clippy::unwrap_used, reason = "what fails here fails the test")]
-
 use std::io::Write;
 use std::process::{Command, Stdio};
 

@@ -207,9 +207,14 @@ pub(crate) fn withdraw(at: &mut Asked<'_>, entry: &str, withdrawn: bool) -> Resu
 
 /// Entries in a list, newest first.
 pub(crate) fn rows(at: &Asked<'_>, within: Within, most: usize) -> Result<Vec<EntryRow>, Fault> {
-    let heads = at.state.ledger.list(Kind::Entry, within)?;
+    // A few more than are shown: two corrections made apart are one row.
+    let heads =
+        at.state.ledger.newest(Kind::Entry, within, u32::try_from(most + 8).unwrap_or(u32::MAX))?;
     let mut rows: Vec<EntryRow> = Vec::new();
-    for head in heads.into_iter().take(most) {
+    for head in heads {
+        if rows.len() >= most {
+            break;
+        }
         // Two corrections made apart are one entry in a list; its page shows both.
         if rows.last().is_some_and(|row| row.entry == head.record.to_string()) {
             continue;
