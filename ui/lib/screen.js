@@ -74,6 +74,19 @@ export class Screen extends HTMLElement {
     this.render();
   }
 
+  /**
+   * Does what was asked for; a fault is shown in place of the screen, with a way to try again.
+   * @param {() => Promise<void>} work
+   */
+  async attempt(work) {
+    try {
+      await work();
+    } catch (error) {
+      this.problem = /** @type {Error} */ (error);
+      this.render();
+    }
+  }
+
   connectedCallback() {
     this.classList.add('screen');
     watchNotices(() => this.render(), this.gone);
@@ -195,7 +208,7 @@ export function inventedMark() {
  */
 export function goBack(up) {
   if ((history.state?.at ?? 0) > 0) history.back();
-  else location.replace(up);
+  else goInstead(up);
 }
 
 /**
@@ -212,7 +225,10 @@ export function go(href) {
  */
 export function goInstead(href) {
   clearNotice();
-  location.replace(href);
+  // The engines differ in what they keep of a step that is replaced, so the step stays and only its address changes.
+  scrollTo(0, 0);
+  history.replaceState(history.state, '', href);
+  dispatchEvent(new Event('hashchange'));
 }
 
 /**

@@ -277,7 +277,7 @@ export class Form {
     ];
     return h(
       'div',
-      { key: `field ${view.pick?.key ?? view.key}`, class: `field${error ? ' wrong' : ''}${odd ? ' odd' : ''}` },
+      { key: `field ${view.pick?.key ?? view.key}`, class: `field${fault(error, text === '')}${odd ? ' odd' : ''}` },
       h(
         'div',
         { class: 'field-top' },
@@ -319,7 +319,7 @@ export class Form {
           spellcheck: 'false',
           'aria-label': view.name,
           'aria-describedby': describes.join(' '),
-          'aria-invalid': error ? 'true' : null,
+          'aria-invalid': error && text !== '' ? 'true' : null,
           value: text,
           oninput: (/** @type {Event} */ event) =>
             this.type(view, /** @type {HTMLInputElement} */ (event.target).value),
@@ -333,7 +333,7 @@ export class Form {
       error &&
         noteView({
           id: `${id}-error`,
-          tone: 'impossible',
+          tone: text === '' ? 'unusual' : 'impossible',
           lead: error.says,
           acts: error.acts,
           act: (act) => this.act(act),
@@ -407,7 +407,7 @@ export class Form {
     const describes = [...(view.help ? [`${id}-help`] : []), ...(error ? [`${id}-error`] : [])].join(' ') || null;
     return h(
       'div',
-      { key: `field ${view.key}`, class: `field${error ? ' wrong' : ''}` },
+      { key: `field ${view.key}`, class: `field${fault(error, !chosen)}` },
       h('div', { class: 'field-top' }, h('span', { class: 'label', id: `${id}-label` }, view.label)),
       short
         ? h(
@@ -444,7 +444,7 @@ export class Form {
       error &&
         noteView({
           id: `${id}-error`,
-          tone: 'impossible',
+          tone: chosen ? 'impossible' : 'unusual',
           lead: error.says,
           acts: error.acts,
           act: (act) => this.act(act),
@@ -452,6 +452,16 @@ export class Form {
       notes.map((note) => noteView({ ...note, id: elementId('note', note.code), act: (act) => this.act(act) })),
     );
   }
+}
+
+/**
+ * How a field is marked: a question that hangs on a blank one is not a wrong answer.
+ * @param {Desk.Message | null} error
+ * @param {boolean} blank
+ */
+function fault(error, blank) {
+  if (!error) return '';
+  return blank ? ' odd' : ' wrong';
 }
 
 /**

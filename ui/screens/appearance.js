@@ -24,9 +24,11 @@ export class Appearance extends Screen {
 
   /** @param {Desk.Theme} theme */
   async #choose(theme) {
-    await ask({ ask: 'choose_appearance', theme }, 'done');
-    wear(theme);
-    await this.reload();
+    await this.attempt(async () => {
+      this.#theme = (await ask({ ask: 'choose_appearance', theme }, 'appearance')).theme;
+      wear(this.#theme);
+      this.render();
+    });
   }
 
   draw() {

@@ -21,26 +21,28 @@ export class Home extends Screen {
     if (this.#adding) return;
     this.#adding = true;
     this.render();
-    try {
+    await this.attempt(async () => {
       this.#overview = await ask({ ask: 'add_demo' }, 'overview');
       notice({ says: 'The demo site is there. Everything in it is invented.' });
-    } catch (error) {
-      this.problem = /** @type {Error} */ (error);
-    }
+    });
     this.#adding = false;
     this.render();
   }
 
   /** @param {Desk.DraftRow} draft */
   async #discard(draft) {
-    await ask({ ask: 'discard_draft', draft: draft.draft }, 'done');
-    await this.reload();
-    notice({
-      says: `Draft discarded: ${draft.label}`,
-      undo: async () => {
-        await ask({ ask: 'restore_draft', draft: draft.draft }, 'form');
-        await this.reload();
-      },
+    await this.attempt(async () => {
+      await ask({ ask: 'discard_draft', draft: draft.draft }, 'done');
+      await this.reload();
+      notice({ says: `Draft discarded: ${draft.label}`, undo: () => this.#bringBack(draft.draft) });
+    });
+  }
+
+  /** @param {string} draft */
+  async #bringBack(draft) {
+    await this.attempt(async () => {
+      await ask({ ask: 'restore_draft', draft }, 'form');
+      await this.reload();
     });
   }
 

@@ -21,8 +21,10 @@ export class Units extends Screen {
 
   /** @param {Desk.Request} request */
   async #choose(request) {
-    await ask(request, 'done');
-    await this.reload();
+    await this.attempt(async () => {
+      this.#units = await ask(request, 'units');
+      this.render();
+    });
   }
 
   draw() {

@@ -27,7 +27,7 @@ pub enum Reply {
         /// When, as `14:07`.
         at: String,
     },
-    /// To `discard_draft`, `withdraw_entry`, `restore_entry`, `choose_unit`, `choose_preset`, `choose_appearance`.
+    /// To `discard_draft`, `withdraw_entry`, `restore_entry`.
     Done {
         /// What happened, in words.
         says: String,
@@ -49,9 +49,9 @@ pub enum Reply {
     VisitForm(VisitFormView),
     /// To `entry`.
     Entry(Box<EntryView>),
-    /// To `units`.
+    /// To `units`, `choose_unit`, `choose_preset`.
     Units(UnitsView),
-    /// To `appearance`.
+    /// To `appearance`, `choose_appearance`.
     Appearance {
         /// The theme in use.
         theme: Theme,
