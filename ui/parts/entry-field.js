@@ -6,7 +6,7 @@ import { icon } from '../lib/icons.js';
 import { say } from '../lib/say.js';
 import { openSheet } from '../lib/sheet.js';
 import { changeSign } from '../lib/typed.js';
-import { toNext } from './form.js';
+import { toNext } from '../lib/typing.js';
 import { radioRow } from './form-sheets.js';
 import { noteView } from './note.js';
 
