@@ -76,9 +76,15 @@ fn look(shape: Value) {
         holds(&driver, &axe, "the empty ledger").await;
         hand.tap("Add the demo site").await;
         hand.sees("Filed last").await;
-        for theme in ["Light", "Dark", "High contrast"] {
+        for (theme, name) in [("Light", "light"), ("Dark", "dark"), ("High contrast", "contrast")] {
             hand.go("#/appearance").await;
             hand.tap(theme).await;
+            let drawn = driver
+                .client
+                .execute("return document.documentElement.dataset.theme;", Vec::new())
+                .await
+                .unwrap();
+            assert_eq!(drawn, json!(name));
             every_screen(&driver, &hand, &axe).await;
         }
         // The rules do find what is wrong: a picture without words.

@@ -195,11 +195,11 @@ impl Point<'_> {
             let mut note = Note::unusual(
                 format!("{key}.extreme"),
                 key,
-                Sentence::new("Dry bulb {0} is outside what few instruments hold.")
+                Sentence::new("Dry bulb {0} is beyond what most instruments read.")
                     .with(dry_bulb.amount()),
             )
             .because(Sentence::new(
-                "Above 60 °C (140 °F) or below −40 °C check the probe's range, or the unit.",
+                "Above 60 °C (140 °F) or below −40 °C check the probe’s range, or the unit.",
             ));
             note.offers.extend(offer);
             notes.push(note);

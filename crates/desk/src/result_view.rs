@@ -215,11 +215,18 @@ pub(crate) fn drivers(answer: &Answer, units: &UnitChoice) -> Drivers {
         return none(None);
     }
     if !figure.unknown.is_empty() {
-        return none(Some(format!(
-            "No ± is given for {}: type one beside {} and the result gets its own.",
-            list(&figure.unknown),
-            if figure.unknown.len() == 1 { "it" } else { "each" },
-        )));
+        let says = match figure.unknown.as_slice() {
+            [one] => format!(
+                "No ± is given for {}: type one beside it and the result gets its own.",
+                uncapital(one)
+            ),
+            many => format!(
+                "No ± is given for {} readings, {} first: type one beside each and the result gets its own.",
+                many.len(),
+                uncapital(&many[0])
+            ),
+        };
+        return none(Some(says));
     }
     let view = |label: String, share: f64| DriverView { label, share, text: percent(share) };
     let mut rows: Vec<DriverView> = figure
