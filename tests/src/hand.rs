@@ -61,6 +61,20 @@ impl Hand {
         self.settle().await;
     }
 
+    /// Goes where a link of the page leads whose address holds this.
+    pub async fn follow(&self, part: &str) {
+        let path = format!("(//a[contains(@href, {})])[1]", literal(part));
+        let element = self.find(Locator::XPath(&path)).await;
+        let to = element.attr("href").await.ok().flatten().unwrap_or_default();
+        self.go(&to).await;
+    }
+
+    /// The address of the screen, behind the number sign and with it.
+    pub async fn address(&self) -> String {
+        let hash = self.client.execute("return location.hash;", Vec::new()).await;
+        hash.ok().and_then(|hash| hash.as_str().map(str::to_owned)).unwrap_or_default()
+    }
+
     /// Types into the field of this key, over what stands there.
     pub async fn type_into(&self, key: &str, text: &str) {
         let id = format!("field-{}", key.replace('.', "-"));

@@ -48,9 +48,22 @@ async fn every_screen(driver: &Driver, hand: &Hand, axe: &str) {
         holds(driver, axe, &screen).await;
     }
     hand.go("#/sites").await;
-    for tap in ["Haldry Fork School", "AH-2", "Heat moved by the air"] {
-        hand.tap(tap).await;
-        holds(driver, axe, tap).await;
+    hand.tap("Haldry Fork School").await;
+    hand.sees("Visits").await;
+    holds(driver, axe, "a site").await;
+    let site = hand.address().await;
+    for (link, screen) in
+        [("#/visit/", "a visit"), ("#/equipment/", "equipment"), ("#/entry/", "an entry")]
+    {
+        hand.go(&site).await;
+        hand.sees("Visits").await;
+        hand.follow(link).await;
+        holds(driver, axe, screen).await;
+    }
+    let site = site.split('?').next().unwrap_or_default();
+    for form in ["/edit", "/equipment/new", "/visit/new"] {
+        hand.go(&format!("{site}{form}")).await;
+        holds(driver, axe, form).await;
     }
     // A refused form: two bulbs the wrong way round.
     hand.go("#/check/air_state").await;

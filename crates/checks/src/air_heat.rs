@@ -521,7 +521,10 @@ fn judge(readings: &Readings, results: &Results, process: Process, outcome: &mut
                 Sentence::new("Read the other way round this would be a cooling coil."),
             )
             .because(Sentence::new("If the points were taken in the wrong order, swap them."))
-            .offering(Offer::new("Swap entering and leaving", swap_points(readings))),
+            .offering(Offer::new(
+                "Swap entering and leaving",
+                swap_points(&readings.entering, &readings.leaving),
+            )),
         );
     }
 }
@@ -535,15 +538,13 @@ fn entering_looks_cooled(readings: &Readings) -> bool {
 }
 
 /// The changes that exchange both points.
-pub(crate) fn swap_points(readings: &Readings) -> Vec<Change> {
+pub(crate) fn swap_points(entering: &Read, leaving: &Read) -> Vec<Change> {
     let swap = |of: &str| Change::Swap(ENTERING.key(of).into(), LEAVING.key(of).into());
-    let mut changes = vec![swap("dry_bulb"), swap(readings.entering.by)];
-    if readings.leaving.by != readings.entering.by {
-        changes.push(swap(readings.leaving.by));
-        changes
-            .push(Change::Choose(ENTERING.key("humidity_by").into(), readings.leaving.by.into()));
-        changes
-            .push(Change::Choose(LEAVING.key("humidity_by").into(), readings.entering.by.into()));
+    let mut changes = vec![swap("dry_bulb"), swap(entering.by)];
+    if leaving.by != entering.by {
+        changes.push(swap(leaving.by));
+        changes.push(Change::Choose(ENTERING.key("humidity_by").into(), leaving.by.into()));
+        changes.push(Change::Choose(LEAVING.key("humidity_by").into(), entering.by.into()));
     }
     changes
 }

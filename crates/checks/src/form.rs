@@ -4,6 +4,8 @@ use std::borrow::Cow;
 
 use dewledger_quantities::{Amount, Kind};
 
+use crate::given::Given;
+
 /// Text of a form: mostly fixed, sometimes made (stream 3).
 pub type Text = Cow<'static, str>;
 
@@ -85,6 +87,12 @@ pub struct Repeat {
     pub add: Option<Text>,
     /// Stands where one can be taken away: "Take this stream away"; the last one goes.
     pub remove: Option<Text>,
+}
+
+/// How many of a repeated part there are: what was chosen, within its bounds.
+#[must_use]
+pub fn count(given: &Given, choice: &str, least: usize, most: usize) -> usize {
+    given.choice(choice).and_then(|count| count.parse().ok()).unwrap_or(least).clamp(least, most)
 }
 
 /// Something asked.

@@ -13,7 +13,7 @@ use dewledger_quantities::{
 
 use crate::check::{About, Check, Group};
 use crate::flow_block::{Flow, FlowBlock};
-use crate::form::{Mark, ReadingItem, Repeat, Section};
+use crate::form::{Mark, ReadingItem, Repeat, Section, count};
 use crate::given::Given;
 use crate::outcome::{Caution, Figure, Missing, Note, Outcome, Role, StatePoint, Step};
 use crate::pressure;
@@ -126,10 +126,6 @@ pub fn solve(streams: &[Stream]) -> Result<Results, dewledger_properties::AirErr
     })
 }
 
-fn count(given: &Given) -> usize {
-    given.choice(COUNT).and_then(|count| count.parse().ok()).unwrap_or(LEAST).clamp(LEAST, MOST)
-}
-
 fn point(index: usize) -> Point<'static> {
     Point { prefix: PREFIXES[index], name: NAMES[index] }
 }
@@ -144,7 +140,7 @@ impl Check for Mixing {
     }
 
     fn form(&self, given: &Given) -> Vec<Section> {
-        let count = count(given);
+        let count = count(given, COUNT, LEAST, MOST);
         let mut sections = vec![pressure::section(given)];
         for (index, prefix) in PREFIXES.into_iter().enumerate().take(count) {
             let mut items = point(index).items(given);
@@ -189,7 +185,7 @@ impl Check for Mixing {
     }
 
     fn solve(&self, given: &Given) -> Result<Outcome, Stop> {
-        let count = count(given);
+        let count = count(given, COUNT, LEAST, MOST);
         let (here, read) = pressure::with(given, |here| read_streams(given, here, count))?;
         one_plenum(&read)?;
         let streams: Vec<Stream> = read

@@ -153,11 +153,8 @@ fn the_same_readings_in_both_systems_are_one_result() {
     assert_eq!(a.unit, "kW", "shown in the person's units, whatever was typed");
     assert_eq!(ip.headline.says, "Heat removed, total");
     // The book's constants follow the unit that the flow was typed in.
-    assert!(
-        ip.versus[0].title.contains("lb/h") || ip.versus[0].title.contains("kg/m³"),
-        "{}",
-        ip.versus[0].title
-    );
+    assert_eq!(ip.versus[0].title, "Total by 4.500\u{a0}lb/h per cfm");
+    assert_eq!(si.versus[0].title, "Total by 1.200\u{a0}kg/m³");
     assert!(ip.versus[0].gap.contains("too high"), "{}", ip.versus[0].gap);
 }
 

@@ -48,7 +48,7 @@ fn main() {
     for input in &inputs {
         match state(*input) {
             Some([w, h, v, wet_bulb, dew_point]) => {
-                println!("{w:e},{h:e},{v:e},{wet_bulb},{dew_point}")
+                println!("{w:e},{h:e},{v:e},{wet_bulb},{dew_point}");
             }
             None => println!("nan,nan,nan,nan,nan"),
         }

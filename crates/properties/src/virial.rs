@@ -119,7 +119,7 @@ pub(crate) fn virials(t: f64) -> Virials {
 mod tests {
     use super::*;
 
-    /// IAPWS G9-12 table 7. Its C_aww has other last digits of the same equation: 1e-4.
+    /// IAPWS G9-12 table 7. Its `C_aww` has other last digits of the same equation: 1e-4.
     #[test]
     fn virials_agree_with_iapws_g9_12_table_7() {
         type Row = (f64, [f64; 7]);
