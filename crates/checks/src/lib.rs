@@ -9,6 +9,7 @@ mod outcome;
 mod refusal;
 
 pub mod doubt;
+pub mod drawn;
 pub mod form;
 
 pub mod flow_block;

@@ -3,6 +3,7 @@
 use dewledger_properties::MoistAir;
 use dewledger_quantities::{Amount, Sentence};
 
+use crate::drawn::{Curve, Line, Table};
 use crate::form::{Mark, Text};
 
 /// The answer of a check.
@@ -20,6 +21,12 @@ pub struct Outcome {
     pub steps: Vec<Step>,
     /// Air states behind it.
     pub states: Vec<StatePoint>,
+    /// Lines between states, for the chart.
+    pub lines: Vec<Line>,
+    /// Results over a range.
+    pub curves: Vec<Curve>,
+    /// Tables that are results in themselves.
+    pub tables: Vec<Table>,
     /// Keys of the points that were taken as saturated within their ±.
     pub saturated: Vec<String>,
     /// Where the pressure comes from, for the line under the title.
