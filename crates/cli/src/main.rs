@@ -31,8 +31,11 @@ enum Command {
     /// Reads a CSV table of air readings on standard input and appends what follows from them.
     #[command(long_about = AIR, after_help = STATUS)]
     Air {
-        /// Columns to append instead of the usual ones, as "wet bulb [degF]"; may be given more than once.
-        #[arg(long = "column", value_name = "QUANTITY [UNIT]")]
+        #[arg(
+            long = "column",
+            value_name = "QUANTITY [UNIT]",
+            help = "Column to append instead of the usual ones, as \"wet bulb [degF]\"; may be given more than once"
+        )]
         columns: Vec<String>,
     },
     /// Works out one check from FIELD=VALUE words, or answers JSON requests, one a line, on standard input.
