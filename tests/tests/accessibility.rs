@@ -27,7 +27,6 @@ const RUN: &str = "
 /// The screens that need no identity in their address.
 const PLAIN: &[&str] =
     &["#/", "#/checks", "#/sites", "#/sites/new", "#/units", "#/appearance", "#/about"];
-const CHECKS: &[&str] = &["air_heat", "air_state", "book_constants", "mixing", "condensate"];
 
 async fn holds(driver: &Driver, axe: &str, screen: &str) {
     // A client runs scripts outside the page's policy, as a person's own tools would.
@@ -42,7 +41,7 @@ async fn every_screen(driver: &Driver, hand: &Hand, axe: &str) {
         hand.go(screen).await;
         holds(driver, axe, screen).await;
     }
-    for check in CHECKS {
+    for check in dewledger_checks::ALL.iter().map(|check| check.about().id) {
         let screen = format!("#/check/{check}");
         hand.go(&screen).await;
         holds(driver, axe, &screen).await;
