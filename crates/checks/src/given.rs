@@ -4,6 +4,8 @@ use std::collections::BTreeMap;
 
 use dewledger_quantities::{Amount, Quantity, Unit};
 
+use crate::part::{Part, half_width};
+
 /// One reading, read from what was typed.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Reading {
@@ -28,8 +30,10 @@ impl Reading {
 pub struct Given {
     readings: BTreeMap<String, Reading>,
     choices: BTreeMap<String, String>,
+    parts: BTreeMap<String, Vec<Part>>,
     shifts: BTreeMap<&'static str, f64>,
     floors: BTreeMap<String, f64>,
+    drawing: bool,
 }
 
 impl Given {
@@ -64,6 +68,20 @@ impl Given {
             reading.half_width_si = Some(half_width_si);
         }
         self
+    }
+
+    /// Says what the doubt of a reading that is there is made of; its half-width follows.
+    pub fn doubt_by(&mut self, key: &str, parts: Vec<Part>) {
+        if let Some(reading) = self.readings.get_mut(key) {
+            reading.half_width_si = half_width(&parts);
+            self.parts.insert(key.to_owned(), parts);
+        }
+    }
+
+    /// What the doubt of a reading is made of; empty where only its half-width is known, or nothing.
+    #[must_use]
+    pub fn parts(&self, key: &str) -> &[Part] {
+        self.parts.get(key).map_or(&[], Vec::as_slice)
     }
 
     /// The reading at `key`.
@@ -111,6 +129,17 @@ impl Given {
     /// Sets the floor of a difference from its known doubt.
     pub(crate) fn set_floor(&mut self, difference: &str, floor_si: f64) {
         self.floors.insert(difference.to_owned(), floor_si);
+    }
+
+    /// From now on it is drawn around the readings: air beyond saturation by however much counts as saturated.
+    pub(crate) fn drawing(&mut self) {
+        self.drawing = true;
+    }
+
+    /// Whether it is drawn around the readings.
+    #[must_use]
+    pub fn is_drawn(&self) -> bool {
+        self.drawing
     }
 
     /// The same, with each key moved by its part, in stored SI units. A key without a reading is a worked-out value.

@@ -11,6 +11,9 @@ mod refusal;
 pub mod doubt;
 pub mod drawn;
 pub mod form;
+pub mod part;
+pub mod statement;
+pub mod takes;
 
 pub mod flow_block;
 pub mod pressure;

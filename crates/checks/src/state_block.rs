@@ -235,14 +235,20 @@ impl Point<'_> {
         pressure: Pressure,
     ) -> Result<(MoistAir, Option<Note>, bool), Stop> {
         let key = self.key(by);
-        let near_k = band(given.reading(&self.key("dry_bulb")), humidity);
+        // A draw beyond saturation is saturated air at its dry bulb, however far beyond.
+        let drawn = given.is_drawn();
+        let near_k = if drawn {
+            f64::INFINITY
+        } else {
+            band(given.reading(&self.key("dry_bulb")), humidity)
+        };
         let temperature = ThermodynamicTemperature::from_si(humidity.amount.si());
         let above = humidity.amount.si() - dry_bulb.si();
         let near = match by {
             "wet_bulb" | "dew_point" | "frost_point" => above > 0.0 && above <= near_k,
             "relative_humidity" | "relative_humidity_over_ice" => {
                 let over = humidity.amount.si() - 1.0;
-                over > 0.0 && over <= humidity.half_width_si.unwrap_or(NEAR_RH)
+                over > 0.0 && (drawn || over <= humidity.half_width_si.unwrap_or(NEAR_RH))
             }
             _ => false,
         };
