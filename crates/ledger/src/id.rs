@@ -61,6 +61,8 @@ ids! {
     VisitId;
     /// An entry.
     EntryId;
+    /// An instrument.
+    InstrumentId;
     /// A revision of any of them.
     RevisionId;
     /// A draft.

@@ -48,7 +48,7 @@ mod turn;
 pub use at::At;
 pub use draft::Draft;
 pub use error::{OpenError, WriteError};
-pub use id::{BadId, DraftId, EntryId, EquipmentId, RevisionId, SiteId, VisitId};
+pub use id::{BadId, DraftId, EntryId, EquipmentId, InstrumentId, RevisionId, SiteId, VisitId};
 pub use open::{Event, Ledger, Opened};
 pub use record::{Body, Head, Kind, RecordId, ResultRow, Revision, Within};
 pub use salvage::Salvaged;

@@ -1,9 +1,12 @@
-//! Records and their revisions: sites, equipment, visits, entries.
+//! Records and their revisions: sites, equipment, visits, entries, instruments.
 
 use rusqlite::{OptionalExtension, Row, TransactionBehavior, params};
 
 use crate::id::{self, BadId};
-use crate::{At, DraftId, EntryId, EquipmentId, Ledger, RevisionId, SiteId, VisitId, WriteError};
+use crate::{
+    At, DraftId, EntryId, EquipmentId, InstrumentId, Ledger, RevisionId, SiteId, VisitId,
+    WriteError,
+};
 
 /// What a record is.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -16,6 +19,8 @@ pub enum Kind {
     Visit,
     /// A check or a full set, filed.
     Entry,
+    /// An instrument with its probes.
+    Instrument,
 }
 
 impl Kind {
@@ -25,6 +30,7 @@ impl Kind {
             Kind::Equipment => "equipment",
             Kind::Visit => "visit",
             Kind::Entry => "entry",
+            Kind::Instrument => "instrument",
         }
     }
 }
@@ -40,6 +46,8 @@ pub enum RecordId {
     Visit(VisitId),
     /// An entry.
     Entry(EntryId),
+    /// An instrument.
+    Instrument(InstrumentId),
 }
 
 impl RecordId {
@@ -51,6 +59,7 @@ impl RecordId {
             Kind::Equipment => RecordId::Equipment(EquipmentId::new(at)),
             Kind::Visit => RecordId::Visit(VisitId::new(at)),
             Kind::Entry => RecordId::Entry(EntryId::new(at)),
+            Kind::Instrument => RecordId::Instrument(InstrumentId::new(at)),
         }
     }
 
@@ -62,6 +71,7 @@ impl RecordId {
             RecordId::Equipment(_) => Kind::Equipment,
             RecordId::Visit(_) => Kind::Visit,
             RecordId::Entry(_) => Kind::Entry,
+            RecordId::Instrument(_) => Kind::Instrument,
         }
     }
 
@@ -71,6 +81,7 @@ impl RecordId {
             RecordId::Equipment(id) => id.to_string(),
             RecordId::Visit(id) => id.to_string(),
             RecordId::Entry(id) => id.to_string(),
+            RecordId::Instrument(id) => id.to_string(),
         }
     }
 }
@@ -178,6 +189,7 @@ fn revision(row: &Row<'_>) -> rusqlite::Result<Revision> {
         "equipment" => RecordId::Equipment(EquipmentId::of(record)),
         "visit" => RecordId::Visit(VisitId::of(record)),
         "entry" => RecordId::Entry(EntryId::of(record)),
+        "instrument" => RecordId::Instrument(InstrumentId::of(record)),
         other => return Err(bad(BadId { text: format!("{other} {record}") })),
     };
     Ok(Revision {
@@ -453,4 +465,5 @@ into_record! {
     EquipmentId => Equipment;
     VisitId => Visit;
     EntryId => Entry;
+    InstrumentId => Instrument;
 }
