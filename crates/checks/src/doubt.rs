@@ -89,11 +89,21 @@ impl Worked {
         self.doubts.values().any(|doubt| doubt.wants_draws && doubt.unknown.is_empty())
     }
 
+    /// Results that draws have to be made for.
+    #[must_use]
+    pub fn draw_keys(&self) -> Vec<String> {
+        self.doubts
+            .iter()
+            .filter(|(_, doubt)| doubt.wants_draws && doubt.unknown.is_empty())
+            .map(|(key, _)| key.clone())
+            .collect()
+    }
+
     /// Puts what the draws say in place of what first order could not: the ± where both agree (JCGM 101:2008, clause
     /// 8), else the interval.
     pub fn settle(&mut self, drawn: &Drawn) {
         for (key, doubt) in &mut self.doubts {
-            if !doubt.wants_draws || !doubt.unknown.is_empty() || doubt.u_si <= 0.0 {
+            if !doubt.wants_draws || !doubt.unknown.is_empty() {
                 continue;
             }
             let (Some(value), Some(interval)) =
@@ -102,7 +112,10 @@ impl Worked {
                 continue;
             };
             let half_width = combine::quantile(doubt.freedom) * doubt.u_si;
-            if interval.agrees(value.si(), half_width, doubt.u_si) {
+            if interval.is_empty() {
+                // It does not depend on what is in doubt.
+                doubt.wants_draws = false;
+            } else if doubt.u_si > 0.0 && interval.agrees(value.si(), half_width, doubt.u_si) {
                 doubt.half_width_si = Some(half_width);
             } else {
                 doubt.interval = Some(interval);

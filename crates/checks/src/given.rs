@@ -123,6 +123,10 @@ impl Given {
     /// `unstated`, the floor for readings without a stated ±. In stored SI units.
     #[must_use]
     pub fn floor(&self, difference: &str, unstated: f64) -> f64 {
+        // A draw is one possible truth: nothing in it is too small to be told.
+        if self.drawing {
+            return 0.0;
+        }
         self.floors.get(difference).copied().unwrap_or(unstated)
     }
 

@@ -14,6 +14,7 @@ pub mod form;
 pub mod part;
 pub mod statement;
 pub mod takes;
+pub mod verdict;
 
 pub mod flow_block;
 pub mod pressure;

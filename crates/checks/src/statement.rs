@@ -182,7 +182,10 @@ impl Statement {
         let own = ((fixed + share) / q).powi(2) - offset.powi(2) - gain.powi(2)
             + self.resolution.powi(2) / 12.0;
         let shared = |part: &str, u: f64| {
-            Part::certain(Source::shared(format!("{probe}/{part}"), name), u * step)
+            Part::certain(
+                Source::shared(format!("{probe}/{part}"), format!("{name}: calibration")),
+                u * step,
+            )
         };
         let parts = [
             Part::certain(Source::Own, own.max(0.0).sqrt() * step),

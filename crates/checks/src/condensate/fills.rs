@@ -194,7 +194,9 @@ pub(super) fn drain(
             );
         }
     }
-    match run(&rates) {
+    // Whether it rises is told from what was read, not from draws around it.
+    let run = if given.is_drawn() { Run::Even } else { run(&rates) };
+    match run {
         Run::Rising => {
             outcome.notes.push(
                 Note::unusual("still_rising", fill_key(1, "volume"), Sentence::new("The coil or the pan is still filling: wait and fill again."))

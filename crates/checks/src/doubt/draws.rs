@@ -40,6 +40,12 @@ pub struct Interval {
 }
 
 impl Interval {
+    /// Whether no draw moved the result.
+    #[must_use]
+    pub fn is_empty(self) -> bool {
+        self.high_si - self.low_si <= 1e-12 * self.high_si.abs()
+    }
+
     /// Whether both ends agree with `value ± half_width` within half a unit of the first digit of `u` (JCGM 101:2008,
     /// clause 8).
     #[must_use]

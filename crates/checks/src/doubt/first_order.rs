@@ -149,8 +149,8 @@ fn effects(
                 (Some(up), Some(down)) => Effect {
                     by: 0.5 * (up - down),
                     bend: (up + down - 2.0 * middle).abs(),
-                    // Saturated here and on both sides: how it moves is not seen from here, unless it does not move.
-                    broken: both_flat && moves(up, middle),
+                    // Saturated here and on both sides: how it moves is not seen from here.
+                    broken: both_flat,
                 },
                 (Some(up), None) => Effect { by: up - middle, bend: 0.0, broken: false },
                 (None, Some(down)) => Effect { by: middle - down, bend: 0.0, broken: false },
@@ -159,11 +159,6 @@ fn effects(
             Some((figure.key.to_string(), effect))
         })
         .collect()
-}
-
-/// Whether a result moved at all.
-fn moves(one: f64, other: f64) -> bool {
-    (one - other).abs() > 1e-12 * other.abs().max(1e-12)
 }
 
 /// A step small enough to stay physical and large enough to be seen, for asking only whether a result depends on

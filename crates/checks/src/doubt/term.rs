@@ -45,13 +45,15 @@ pub(super) fn of_readings(given: &Given, names: &BTreeMap<String, (String, bool)
             let source = match &part.source {
                 Source::Shared { id, name } => {
                     let term = shared.entry(id.as_str()).or_insert_with(|| Term {
-                        source: format!("{name}: calibration"),
+                        source: name.clone(),
                         moves: Vec::new(),
                         freedom: part.freedom,
                     });
                     term.moves.push((Moved::Reading(key.to_owned()), part.u_si));
                     continue;
                 }
+                // A ± typed by hand is all there is to say of it.
+                Source::Own if parts.len() == 1 => name.clone(),
                 Source::Own => format!("{name}: the reading itself"),
                 Source::Scatter => format!("{name}: scatter of its takes"),
                 Source::Place => format!("{name}: where it was held"),
