@@ -23,7 +23,7 @@ fn typed(case: &Value) -> Typed {
         // A number as a program writes it; more than three decimals are never ambiguous.
         let text = format!("{:.9}", value[0].as_f64().unwrap());
         let unit = Some(value[1].as_str().unwrap().to_owned());
-        typed.readings.insert(key.clone(), TypedReading { text, unit, plus_minus: None });
+        typed.readings.insert(key.clone(), TypedReading { text, unit, ..TypedReading::default() });
     }
     typed
 }

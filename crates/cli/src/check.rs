@@ -129,9 +129,10 @@ fn typed(fields: &[String]) -> Result<Typed, String> {
             None => (value.trim(), None),
         };
         typed.choices.insert(key.to_owned(), value.trim().to_owned());
-        typed
-            .readings
-            .insert(key.to_owned(), TypedReading { text: text.to_owned(), unit: None, plus_minus });
+        typed.readings.insert(
+            key.to_owned(),
+            TypedReading { text: text.to_owned(), plus_minus, ..TypedReading::default() },
+        );
     }
     Ok(typed)
 }

@@ -15,6 +15,7 @@ use dewledger_quantities::{
 use serde::{Deserialize, Serialize};
 
 use crate::reply::{Act, Change};
+use crate::requirements::StoredVerdict;
 
 /// A stored answer.
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
@@ -27,6 +28,20 @@ pub(crate) struct Answer {
     pub(crate) states: Vec<StoredState>,
     pub(crate) versus: Vec<StoredVersus>,
     pub(crate) pressure: Option<Words>,
+    /// What was asked of it, and the answers.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub(crate) verdicts: Vec<StoredVerdict>,
+    /// The draws behind its intervals.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub(crate) draws: Option<StoredDraws>,
+}
+
+/// What draws were made, so that they can be made again.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+pub(crate) struct StoredDraws {
+    pub(crate) seed: u64,
+    pub(crate) made: usize,
+    pub(crate) saturated: f64,
 }
 
 /// A stored amount.
@@ -101,6 +116,12 @@ pub(crate) struct StoredFigure {
     pub(crate) role: String,
     pub(crate) group: String,
     pub(crate) half_width_si: Option<f64>,
+    /// Low and high end, where an interval stands instead of a half-width.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub(crate) interval_si: Option<(f64, f64)>,
+    /// First order does not stand for it.
+    #[serde(default, skip_serializing_if = "std::ops::Not::not")]
+    pub(crate) wants_draws: bool,
     pub(crate) shares: Vec<(String, f64)>,
     pub(crate) unknown: Vec<String>,
 }
@@ -228,6 +249,10 @@ fn figure(figure: &Figure, doubt: Option<&Doubt>) -> StoredFigure {
         role: role(figure.role).to_owned(),
         group: figure.group.to_owned(),
         half_width_si: doubt.and_then(|doubt| doubt.half_width_si),
+        interval_si: doubt
+            .and_then(|doubt| doubt.interval)
+            .map(|interval| (interval.low_si, interval.high_si)),
+        wants_draws: doubt.is_some_and(|doubt| doubt.wants_draws),
         shares: doubt.map(|doubt| doubt.shares.clone()).unwrap_or_default(),
         unknown: doubt.map(|doubt| doubt.unknown.clone()).unwrap_or_default(),
     }
@@ -309,6 +334,8 @@ impl Answer {
             states: outcome.states.iter().map(state).collect(),
             versus: outcome.versus.iter().map(versus).collect(),
             pressure: outcome.pressure.as_ref().map(Words::of),
+            verdicts: Vec::new(),
+            draws: None,
         }
     }
 

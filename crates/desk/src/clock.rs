@@ -57,3 +57,19 @@ pub(crate) fn full_day(at: At) -> String {
 pub(crate) fn same_day(one: At, other: At) -> bool {
     local(one).date() == local(other).date()
 }
+
+/// The day of the calendar.
+pub(crate) fn date(at: At) -> jiff::civil::Date {
+    local(at).date()
+}
+
+/// "14:20:05", of a moment written as `2026-12-01T14:20:05Z`; none where it is not.
+pub(crate) fn second(text: &str, now: At) -> Option<String> {
+    let at = At { ms: moment_ms(text)?, ..now };
+    Some(local(at).strftime("%H:%M:%S").to_string())
+}
+
+/// Milliseconds since the epoch of a moment written as `2026-12-01T14:20:05Z`.
+pub(crate) fn moment_ms(text: &str) -> Option<i64> {
+    text.trim().parse::<Timestamp>().ok().map(Timestamp::as_millisecond)
+}

@@ -4,9 +4,11 @@ use std::collections::BTreeMap;
 
 use dewledger_ledger::{At, Body, Kind, RecordId};
 
+use crate::classes;
 use crate::desk::{Asked, VERSION};
 use crate::drafts::Kept;
 use crate::entries;
+use crate::instruments::InstrumentBody;
 use crate::places::{EquipmentBody, SiteBody, json};
 use crate::reply::Fault;
 use crate::request::{Place, Typed, TypedReading, TypedValue};
@@ -17,7 +19,6 @@ const DAY_MS: i64 = 24 * 3600 * 1000;
 /// Key, text, unit, ± and its unit.
 type Reading = (&'static str, &'static str, &'static str, Option<(&'static str, &'static str)>);
 
-const K: Option<(&str, &str)> = Some(("0.3", "K"));
 const FLOW: Option<(&str, &str)> = Some(("4 %", "L/s"));
 
 fn typed(choices: &[(&str, &str)], readings: &[Reading]) -> Typed {
@@ -33,11 +34,47 @@ fn typed(choices: &[(&str, &str)], readings: &[Reading]) -> Typed {
                     text: text.to_owned(),
                     unit: Some(unit.to_owned()),
                 }),
+                ..TypedReading::default()
             };
             ((*key).to_owned(), reading)
         })
         .collect();
-    Typed { choices, readings, accepted: Vec::new() }
+    Typed { choices, readings, ..Typed::default() }
+}
+
+/// Says which probe read the bulbs of a form.
+fn read_with(mut typed: Typed, psychrometer: &str) -> Typed {
+    for (key, reading) in &mut typed.readings {
+        let probe = if key.ends_with(".dry_bulb") {
+            1
+        } else if key.ends_with(".wet_bulb") {
+            2
+        } else {
+            continue;
+        };
+        reading.probe = Some(format!("{psychrometer}/{probe}"));
+    }
+    typed
+}
+
+/// The psychrometer that everything at the site was read with.
+fn psychrometer(at: &mut Asked<'_>, when: At) -> Result<String, Fault> {
+    let class = "aspirated_psychrometer";
+    let mut typed = classes::typed(class).ok_or_else(|| Fault::not_found("That class"))?;
+    typed.name = "Psychrometer 2".to_owned();
+    typed.serial = "invented-0217".to_owned();
+    typed.note = "Invented example.".to_owned();
+    for (index, probe) in typed.probes.iter_mut().enumerate() {
+        probe.id = Some((index + 1).to_string());
+    }
+    let body = Body {
+        title: typed.name.clone(),
+        invented: true,
+        app_version: VERSION.to_owned(),
+        text: json(&InstrumentBody { typed })?,
+        ..Body::default()
+    };
+    Ok(at.state.ledger.file(Kind::Instrument, when, &body, None)?.record.to_string())
 }
 
 /// Adds the site with its equipment, visits and entries, each at its moment.
@@ -86,6 +123,7 @@ pub(crate) fn add(at: &mut Asked<'_>) -> Result<(), Fault> {
             people: people.to_owned(),
             running: running.to_owned(),
             typed,
+            runs: Vec::new(),
         })?;
         let body = Body { site: Some(site), ..invented("Haldry Fork School", body) };
         let revision = at.state.ledger.file(Kind::Visit, began, &body, None)?;
@@ -95,6 +133,7 @@ pub(crate) fn add(at: &mut Asked<'_>) -> Result<(), Fault> {
             visit: Some(revision.record.to_string()),
         })
     };
+    let psychrometer = psychrometer(at, ago(75, -40))?;
     let spring = visit(
         at,
         74,
@@ -129,10 +168,10 @@ pub(crate) fn add(at: &mut Asked<'_>) -> Result<(), Fault> {
             &[("pressure.by", "elevation"), ("flow.basis", "actual_leaving")],
             &[
                 ("pressure.elevation", "1620", "m", None),
-                ("entering.dry_bulb", air[0], "degC", K),
-                ("entering.wet_bulb", air[1], "degC", K),
-                ("leaving.dry_bulb", air[2], "degC", K),
-                ("leaving.wet_bulb", air[3], "degC", K),
+                ("entering.dry_bulb", air[0], "degC", None),
+                ("entering.wet_bulb", air[1], "degC", None),
+                ("leaving.dry_bulb", air[2], "degC", None),
+                ("leaving.wet_bulb", air[3], "degC", None),
                 ("flow.rate", flow, "L/s", FLOW),
             ],
         )
@@ -147,10 +186,10 @@ pub(crate) fn add(at: &mut Asked<'_>) -> Result<(), Fault> {
         ],
         &[
             ("pressure.elevation", "1620", "m", None),
-            ("stream1.dry_bulb", "24.4", "degC", K),
+            ("stream1.dry_bulb", "24.4", "degC", None),
             ("stream1.relative_humidity", "42", "%", Some(("2", "%"))),
             ("stream1_flow.rate", "1890", "L/s", FLOW),
-            ("stream2.dry_bulb", "31.2", "degC", K),
+            ("stream2.dry_bulb", "31.2", "degC", None),
             ("stream2.relative_humidity", "24", "%", Some(("2", "%"))),
             ("stream2_flow.rate", "520", "L/s", FLOW),
         ],
@@ -159,10 +198,10 @@ pub(crate) fn add(at: &mut Asked<'_>) -> Result<(), Fault> {
         &[("pressure.by", "elevation"), ("flow.basis", "actual_leaving"), ("fills", "2")],
         &[
             ("pressure.elevation", "1620", "m", None),
-            ("entering.dry_bulb", "26.4", "degC", K),
-            ("entering.wet_bulb", "17.1", "degC", K),
-            ("leaving.dry_bulb", "12.6", "degC", K),
-            ("leaving.wet_bulb", "11.4", "degC", K),
+            ("entering.dry_bulb", "26.4", "degC", None),
+            ("entering.wet_bulb", "17.1", "degC", None),
+            ("leaving.dry_bulb", "12.6", "degC", None),
+            ("leaving.wet_bulb", "11.4", "degC", None),
             ("flow.rate", "2360", "L/s", FLOW),
             ("fill1.volume", "4.0", "L", Some(("0.05", "L"))),
             ("fill1.time", "1225", "s", Some(("3", "s"))),
@@ -174,8 +213,8 @@ pub(crate) fn add(at: &mut Asked<'_>) -> Result<(), Fault> {
         &[("pressure.by", "elevation")],
         &[
             ("pressure.elevation", "1620", "m", None),
-            ("air.dry_bulb", "24.1", "degC", K),
-            ("air.wet_bulb", "15.6", "degC", K),
+            ("air.dry_bulb", "24.1", "degC", None),
+            ("air.wet_bulb", "15.6", "degC", None),
         ],
     );
     let filings = [
@@ -191,7 +230,12 @@ pub(crate) fn add(at: &mut Asked<'_>) -> Result<(), Fault> {
         entries::file(
             &mut then,
             None,
-            Kept { check: check.to_owned(), typed, place, corrects: None },
+            Kept {
+                check: check.to_owned(),
+                typed: read_with(typed, &psychrometer),
+                place,
+                corrects: None,
+            },
         )?;
     }
     Ok(())

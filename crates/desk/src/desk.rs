@@ -1,7 +1,8 @@
 //! The desk: opens the ledger and answers requests.
 
 use std::path::{Path, PathBuf};
-use std::sync::{Mutex, MutexGuard, PoisonError};
+use std::sync::atomic::{AtomicBool, Ordering};
+use std::sync::{Arc, Mutex, MutexGuard, PoisonError};
 
 use dewledger_ledger::{At, Event, Ledger, OpenError};
 use dewledger_quantities::UnitChoice;
@@ -10,8 +11,8 @@ use serde::Serialize;
 use crate::clock::Clock;
 use crate::form_view::check_name;
 use crate::reply::{About, Fault, FaultCode, Reply};
-use crate::request::Request;
-use crate::{demo, drafts, entries, overview, places, units, visits};
+use crate::request::{Place, Request, Typed};
+use crate::{demo, drafts, entries, instruments, overview, places, runs, units, visits};
 
 /// The version that entries are filed with.
 pub const VERSION: &str = env!("CARGO_PKG_VERSION");
@@ -28,6 +29,8 @@ pub struct Desk {
     clock: Clock,
     path: PathBuf,
     event: Event,
+    /// Ends the draws that are running.
+    drawing: Mutex<Arc<AtomicBool>>,
 }
 
 /// What a request works on.
@@ -65,6 +68,7 @@ impl Desk {
             clock,
             path: path.to_owned(),
             event: opened.event,
+            drawing: Mutex::default(),
         })
     }
 
@@ -75,9 +79,17 @@ impl Desk {
     /// [`Fault`], in words for a person.
     pub fn handle(&self, request: Request) -> Result<Reply, Fault> {
         let now = self.clock.at();
+        if matches!(request, Request::Solve { .. } | Request::Draw { .. }) {
+            self.stop_drawing();
+        }
+        if let Request::Draw { check, typed, place } = request {
+            return self.draw(&check, &typed, &place);
+        }
         let mut state = self.state();
         let mut at = Asked { state: &mut state, now };
         match request {
+            // Answered above, without holding the ledger.
+            Request::Draw { .. } => Ok(Reply::Overtaken {}),
             Request::Overview {} => overview::overview(&mut at, &self.event),
             Request::Checks {} => Ok(Reply::Checks {
                 checks: dewledger_checks::ALL.iter().map(|check| check_name(*check)).collect(),
@@ -118,6 +130,18 @@ impl Desk {
                 &site,
                 visits::VisitTyped { people, running, typed },
             ),
+            Request::Instruments {} => instruments::list(&at),
+            Request::InstrumentForm { instrument, class, typed } => {
+                instruments::form(&at, instrument.as_deref(), class.as_deref(), typed)
+            }
+            Request::SaveInstrument { instrument, typed } => {
+                instruments::save(&mut at, instrument.as_deref(), typed)
+            }
+            Request::WithdrawInstrument { instrument, withdrawn } => {
+                instruments::withdraw(&mut at, &instrument, withdrawn)
+            }
+            Request::RunForm { visit, index, typed } => runs::form(&at, &visit, index, typed),
+            Request::SaveRun { visit, index, typed } => runs::save(&mut at, &visit, index, typed),
             Request::Entry { entry } => entries::entry(&at, &entry),
             Request::AddDemo {} => {
                 demo::add(&mut at)?;
@@ -130,6 +154,23 @@ impl Desk {
             Request::ChooseAppearance { theme } => units::choose_appearance(&mut at, theme),
             Request::About {} => Ok(Reply::About(self.about())),
         }
+    }
+
+    /// Draws run off the ledger's lock, so that typing goes on beside them; the next keystroke ends them.
+    fn draw(&self, check: &str, typed: &Typed, place: &Place) -> Result<Reply, Fault> {
+        let stop = Arc::new(AtomicBool::new(false));
+        *self.drawing.lock().unwrap_or_else(PoisonError::into_inner) = Arc::clone(&stop);
+        let drawing = {
+            let now = self.clock.at();
+            let mut state = self.state();
+            entries::drawing(&Asked { state: &mut state, now }, check, place)?
+        };
+        Ok(drawing.work(typed, &stop))
+    }
+
+    fn stop_drawing(&self) {
+        let running = self.drawing.lock().unwrap_or_else(PoisonError::into_inner);
+        running.store(true, Ordering::Relaxed);
     }
 
     /// Answers a request in JSON with a reply in JSON: `{"ok": …}` or `{"fault": …}`. Never fails.

@@ -4,6 +4,7 @@ use dewledger_checks::find;
 use dewledger_ledger::DraftId;
 use serde::{Deserialize, Serialize};
 
+use crate::bench::Bench;
 use crate::clock;
 use crate::desk::Asked;
 use crate::form_view::work;
@@ -56,7 +57,8 @@ pub(crate) fn start(at: &Asked<'_>, id: &str, place: Place) -> Result<Reply, Fau
 pub(crate) fn keep(at: &mut Asked<'_>, draft: Option<String>, kept: Kept) -> Result<Reply, Fault> {
     let check = check(&kept.check)?;
     let title = check.about().label;
-    let typed = spelt_out(&|given| check.form(given), kept.typed, &at.state.units);
+    let bench = Bench::at(at, &kept.place)?;
+    let typed = spelt_out(&|given| check.form(given), kept.typed, &at.state.units, &bench);
     let kept = Kept { typed, ..kept };
     let id = draft.as_deref().map(draft_id).transpose()?;
     let text = serde_json::to_string(&kept)

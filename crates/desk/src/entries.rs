@@ -1,20 +1,24 @@
 //! Entries: checks filed, opened again, corrected, withdrawn.
 
+use std::sync::atomic::AtomicBool;
+
 use dewledger_checks::form::Item;
 use dewledger_ledger::{Body, Head, Kind, RecordId, ResultRow as LedgerRow, Within};
-use dewledger_quantities::{Unit, UnitChoice};
+use dewledger_quantities::{Kind as Quantities, Unit, UnitChoice};
 use serde::{Deserialize, Serialize};
 
 use crate::answer::Answer;
+use crate::bench::{self, Bench};
 use crate::clock;
 use crate::desk::{Asked, VERSION};
 use crate::drafts::{self, Kept, check, draft_id};
-use crate::form_view::{check_name, work};
+use crate::form_view::{Around, check_name, work, work_with_draws};
 use crate::places::{self, equipment_id, json, site_id, visit_id};
 use crate::reply::{
     EntryRow, EntryView, Fault, FaultCode, Filed, ReadingRow, Reply, RevisionRow, Solved, Stage,
 };
-use crate::request::{Place, Typed};
+use crate::request::{Place, Typed, TypedProbe, TypedSpot, TypedTake};
+use crate::requirements;
 use crate::result_view;
 use crate::typed::read_check;
 use crate::visits;
@@ -43,6 +47,24 @@ pub(crate) struct FiledReading {
     /// Without a ± of its own its doubt was covered otherwise.
     #[serde(default)]
     pub(crate) covered: bool,
+    /// What it was read with: accuracy as it stood then.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub(crate) probe: Option<FiledProbe>,
+    /// What the side-by-side run found was taken off this.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub(crate) before_si: Option<f64>,
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub(crate) spot: Option<TypedSpot>,
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub(crate) takes: Vec<TypedTake>,
+}
+
+/// A probe as it stood when an entry was filed.
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+pub(crate) struct FiledProbe {
+    pub(crate) id: String,
+    pub(crate) label: String,
+    pub(crate) typed: TypedProbe,
 }
 
 /// The body of an entry; none where another version wrote what this one cannot read.
@@ -74,10 +96,40 @@ pub(crate) fn solve(
     Ok(Reply::Solved(Box::new(work(check, typed, &around, &at.state.units).solved)))
 }
 
+/// What `draw` works on, taken from the ledger before the long work begins.
+pub(crate) struct Drawing {
+    check: &'static dyn dewledger_checks::Check,
+    around: Around,
+    units: UnitChoice,
+}
+
+/// Gets ready for draws.
+pub(crate) fn drawing(at: &Asked<'_>, id: &str, place: &Place) -> Result<Drawing, Fault> {
+    Ok(Drawing {
+        check: check(id)?,
+        around: places::around(at, place, id, None)?,
+        units: at.state.units.clone(),
+    })
+}
+
+impl Drawing {
+    /// Works the check out with draws; needs the ledger no more.
+    pub(crate) fn work(&self, typed: &Typed, stop: &AtomicBool) -> Reply {
+        match work_with_draws(self.check, typed, &self.around, &self.units, stop) {
+            Some(worked) => Reply::Solved(Box::new(worked.solved)),
+            None => Reply::Overtaken {},
+        }
+    }
+}
+
 /// Every reading with its unit written beside it, so that a later choice of units does not change what it says.
-fn readings(kept: &Kept, units: &UnitChoice) -> Result<(Typed, Vec<FiledReading>), Fault> {
+fn readings(
+    kept: &Kept,
+    units: &UnitChoice,
+    bench: &Bench,
+) -> Result<(Typed, Vec<FiledReading>), Fault> {
     let check = check(&kept.check)?;
-    let read = read_check(check, &kept.typed, units);
+    let read = read_check(check, &kept.typed, units, bench);
     if let Some((field, message)) = read.errors.iter().next() {
         return Err(Fault::at(field.clone(), message.says.clone()));
     }
@@ -91,6 +143,11 @@ fn readings(kept: &Kept, units: &UnitChoice) -> Result<(Typed, Vec<FiledReading>
             let Some(entry) = typed.readings.get_mut(key) else { continue };
             let unit = reading.unit.map_or("", |unit| unit.id);
             entry.unit = Some(unit.to_owned());
+            let with = read.with.get(key);
+            let probe = with.and_then(|with| bench.probe(with.probe.as_deref()?));
+            if crate::read_with::asked_of(item) {
+                entry.probe = Some(probe.map(|probe| probe.id.clone()).unwrap_or_default());
+            }
             let plus_minus =
                 entry.plus_minus.as_ref().filter(|pm| !pm.text.trim().is_empty()).map(|pm| {
                     let unit = crate::typed::plus_minus_unit(item, Some(entry), units);
@@ -104,19 +161,43 @@ fn readings(kept: &Kept, units: &UnitChoice) -> Result<(Typed, Vec<FiledReading>
             rows.push(FiledReading {
                 key: key.to_owned(),
                 name: format!("{}, {}", section.title, item.label.to_lowercase()),
-                text: entry.text.trim().to_owned(),
+                text: as_typed(entry, reading, with),
                 unit: unit.to_owned(),
                 quantity: reading.amount.kind().id().to_owned(),
                 si: reading.amount.si(),
                 half_width_si: reading.half_width_si,
                 plus_minus,
                 covered: item.covered,
+                probe: probe.map(|probe| FiledProbe {
+                    id: probe.id.clone(),
+                    label: probe.label.clone(),
+                    typed: probe.typed.clone(),
+                }),
+                before_si: with.and_then(|with| with.before_si),
+                spot: entry.spot.clone(),
+                takes: entry.takes.clone(),
             });
         }
     }
     // What the form no longer asks for (another humidity was picked) was not part of the result.
     typed.readings.retain(|key, _| rows.iter().any(|row| row.key == *key));
     Ok((typed, rows))
+}
+
+/// A reading as it was typed, or the mean of its takes.
+fn as_typed(
+    typed: &crate::request::TypedReading,
+    reading: &dewledger_checks::Reading,
+    with: Option<&crate::read_with::With>,
+) -> String {
+    let mean = with.and_then(|with| with.mean_si);
+    match (mean, reading.unit) {
+        (Some(si), Some(unit)) => {
+            let amount = dewledger_quantities::Amount::new(reading.amount.kind(), si);
+            dewledger_quantities::show(amount, unit).number
+        }
+        _ => typed.text.trim().to_owned(),
+    }
 }
 
 /// Files a check; the commit has returned when this does.
@@ -130,8 +211,20 @@ pub(crate) fn file(at: &mut Asked<'_>, draft: Option<String>, kept: Kept) -> Res
     let about = check(&kept.check)?.about();
     let site_head = at.state.ledger.head(RecordId::Site(site_id(&site)?))?;
     let around = places::around(at, &kept.place, &kept.check, kept.corrects.as_deref())?;
-    let (typed, readings) = readings(&kept, &at.state.units)?;
-    let worked = work(check(&kept.check)?, &typed, &around, &at.state.units);
+    let (typed, readings) = readings(&kept, &at.state.units, &around.bench)?;
+    // What is filed is final: draws are made now where they are wanted.
+    let never = AtomicBool::new(false);
+    let check = check(&kept.check)?;
+    let worked = work_with_draws(check, &typed, &around, &at.state.units, &never)
+        .unwrap_or_else(|| work(check, &typed, &around, &at.state.units));
+    if let Some(wrong) = worked
+        .answer
+        .iter()
+        .flat_map(|answer| &answer.verdicts)
+        .find_map(|verdict| verdict.errors.first())
+    {
+        return Err(Fault::at("requirements", format!("A requirement: {}", wrong.says)));
+    }
     let answer = worked
         .answer
         .filter(|answer| answer.headline().is_some_and(|figure| figure.value.is_some()));
@@ -157,6 +250,14 @@ pub(crate) fn file(at: &mut Asked<'_>, draft: Option<String>, kept: Kept) -> Res
             })
         })
         .collect();
+    let used: Vec<(String, Quantities, Option<String>)> = readings
+        .iter()
+        .filter(|reading| !reading.covered)
+        .filter_map(|reading| {
+            let kind = Quantities::from_id(&reading.quantity)?;
+            Some((reading.key.clone(), kind, reading.probe.as_ref().map(|probe| probe.id.clone())))
+        })
+        .collect();
     let text = json(&FiledBody { check: kept.check.clone(), typed, readings, answer })?;
     let body = Body {
         site: Some(site_id(&site)?),
@@ -176,6 +277,7 @@ pub(crate) fn file(at: &mut Asked<'_>, draft: Option<String>, kept: Kept) -> Res
             at.state.ledger.revise(&head, at.now, &body, from)?
         }
     };
+    bench::remember(at, used.into_iter())?;
     Ok(Reply::Filed(Filed {
         entry: revision.record.to_string(),
         says: format!("Filed {}", clock::time(at.now)),
@@ -279,6 +381,20 @@ pub(crate) fn entry(at: &Asked<'_>, entry: &str) -> Result<Reply, Fault> {
         cautions: result_view::cautions(&filed.answer),
         working: result_view::working(&filed.answer, units),
         states: result_view::states(&filed.answer, units),
+        requirements: crate::reply::RequirementsView {
+            figures: Vec::new(),
+            directions: Vec::new(),
+            verdicts: filed
+                .answer
+                .verdicts
+                .iter()
+                .enumerate()
+                .map(|(index, verdict)| requirements::view(index, verdict, units))
+                .collect(),
+            before: Vec::new(),
+            conditions: Vec::new(),
+        },
+        wants_draws: false,
     };
     let history = at.state.ledger.history(record)?;
     let first = history.first().map_or(head.at, |revision| revision.at);
@@ -318,6 +434,32 @@ fn unknown(id: &str, label: &str) -> crate::reply::CheckName {
     }
 }
 
+/// "Stem thermometer, wet bulb; grid of 9 points; 4 takes".
+fn read_with_words(reading: &FiledReading) -> Option<String> {
+    let mut parts = Vec::new();
+    if let Some(probe) = &reading.probe {
+        let serial = probe.typed.serial.trim();
+        let serial = if serial.is_empty() { String::new() } else { format!(" (serial {serial})") };
+        parts.push(format!("{}{serial}", probe.label));
+    }
+    match reading.spot.as_ref().map(|spot| (spot.held.as_str(), spot.points.trim())) {
+        Some(("grid", "")) => parts.push("over a grid".to_owned()),
+        Some(("grid", points)) => parts.push(format!("grid of {points} points")),
+        Some(("point", _)) => parts.push("at one point".to_owned()),
+        Some(("averaging", _)) => parts.push("averaging element".to_owned()),
+        _ => {}
+    }
+    match reading.takes.len() {
+        0 => {}
+        1 => parts.push("one take".to_owned()),
+        many => parts.push(format!("mean of {many} takes")),
+    }
+    if reading.before_si.is_some() {
+        parts.push("corrected by the side-by-side run".to_owned());
+    }
+    (!parts.is_empty()).then(|| parts.join("; "))
+}
+
 fn reading_row(reading: &FiledReading) -> ReadingRow {
     let symbol = Unit::find(&reading.unit).map_or("", |unit| unit.symbol);
     // A unit typed with the number is part of the text already.
@@ -331,10 +473,21 @@ fn reading_row(reading: &FiledReading) -> ReadingRow {
     ReadingRow {
         label: reading.name.clone(),
         text,
-        plus_minus: reading.plus_minus.clone().unwrap_or_else(|| {
-            if reading.covered { String::new() } else { "± not\u{a0}known".to_owned() }
-        }),
+        plus_minus: reading.plus_minus.clone().unwrap_or_else(|| plus_minus_words(reading)),
+        with: read_with_words(reading),
     }
+}
+
+/// The ± of a reading whose ± was not typed.
+fn plus_minus_words(reading: &FiledReading) -> String {
+    let (Some(half_width), Some(unit), Some(kind)) =
+        (reading.half_width_si, Unit::find(&reading.unit), Quantities::from_id(&reading.quantity))
+    else {
+        return if reading.covered { String::new() } else { "± not\u{a0}known".to_owned() };
+    };
+    let width_unit = unit.for_difference(kind).unwrap_or(unit);
+    let amount = dewledger_quantities::Amount::new(kind.difference(), half_width);
+    crate::instruments::show_width(amount, half_width, width_unit)
 }
 
 fn revisions(history: &[Head], heads: &[Head], units: &UnitChoice) -> Vec<RevisionRow> {

@@ -2,23 +2,27 @@
 
 use std::collections::BTreeMap;
 
-use dewledger_checks::doubt::work_out;
+use std::sync::atomic::AtomicBool;
+
+use dewledger_checks::doubt::{DRAWS, Drawn, SEED, Worked, draw, work_out};
 use dewledger_checks::form::{ChoiceItem, Item, ReadingItem, Section};
 use dewledger_checks::state_block::readout;
 use dewledger_checks::{Check, Missing, Refusal, Stop, pressure};
+use dewledger_ledger::At;
 use dewledger_quantities::{Quantity, Unit, UnitChoice, show};
 
-use crate::answer::{Answer, act, mark};
+use crate::answer::{Answer, StoredDraws, act, mark};
+use crate::bench::Bench;
 use crate::reply::{
     Act, Change, CheckName, ChoiceView, FieldView, MarkView, Message, NoteView, OptionView,
     ReadingView, SectionView, Solved, Stage, Tone, UnitView, WasView,
 };
-use crate::request::Typed;
-use crate::result_view;
-use crate::typed::{Readout, plus_minus_unit, read_check, unit_of};
+use crate::request::{Typed, TypedRequirement};
+use crate::typed::{Readout, is_begun, plus_minus_unit, read_check, unit_of};
+use crate::{remarks, requirements, result_view, with_view};
 
 /// What surrounds a form.
-#[derive(Debug, Clone, Default)]
+#[derive(Debug, Clone)]
 pub(crate) struct Around {
     /// "AH-2, Haldry Fork School".
     pub(crate) place: String,
@@ -28,6 +32,27 @@ pub(crate) struct Around {
     pub(crate) pressure_known: bool,
     /// Last visit's readings by key, with their day.
     pub(crate) was: BTreeMap<String, (crate::request::TypedReading, String)>,
+    /// What was asked of the same check on the same equipment before, with the day.
+    pub(crate) before: Vec<(TypedRequirement, String)>,
+    /// The instruments at hand.
+    pub(crate) bench: Bench,
+    /// When.
+    pub(crate) now: At,
+}
+
+impl Around {
+    /// Nothing but the instruments.
+    pub(crate) fn bare(bench: Bench, now: At) -> Self {
+        Self {
+            place: String::new(),
+            invented: false,
+            pressure_known: false,
+            was: BTreeMap::new(),
+            before: Vec::new(),
+            bench,
+            now,
+        }
+    }
 }
 
 /// A check worked out, and the answer behind it for filing.
@@ -51,27 +76,80 @@ pub(crate) fn unit_view(unit: &Unit) -> UnitView {
     UnitView { id: unit.id.to_owned(), symbol: unit.symbol.to_owned(), name: unit.name.to_owned() }
 }
 
-/// Works a check out and draws it.
+/// Works a check out to first order and draws it.
 pub(crate) fn work(
     check: &dyn Check,
     typed: &Typed,
     around: &Around,
     units: &UnitChoice,
 ) -> WorkedForm {
-    let read = read_check(check, typed, units);
+    let read = read_check(check, typed, units, &around.bench);
     let result = work_out(check, &read.given);
+    put_together(check, typed, around, units, &read, result, None)
+}
+
+/// The same, with draws where first order does not stand. None when `stop` was set meanwhile.
+pub(crate) fn work_with_draws(
+    check: &dyn Check,
+    typed: &Typed,
+    around: &Around,
+    units: &UnitChoice,
+    stop: &AtomicBool,
+) -> Option<WorkedForm> {
+    let read = read_check(check, typed, units, &around.bench);
+    let mut result = work_out(check, &read.given);
+    let mut drawn = None;
+    if let Ok(worked) = &mut result
+        && worked.wants_draws()
+    {
+        let made = draw(check, &worked.informed, &worked.draw_keys(), DRAWS, stop)?;
+        worked.settle(&made);
+        worked.outcome.notes.extend(remarks::of_draws(&made));
+        drawn = Some(made);
+    }
+    Some(put_together(check, typed, around, units, &read, result, drawn.as_ref()))
+}
+
+fn put_together(
+    check: &dyn Check,
+    typed: &Typed,
+    around: &Around,
+    units: &UnitChoice,
+    read: &Readout,
+    mut result: Result<Worked, Stop>,
+    drawn: Option<&Drawn>,
+) -> WorkedForm {
+    let mut verdicts = Vec::new();
+    if let Ok(worked) = &mut result {
+        worked.outcome.notes.extend(remarks::of_readings(read, &around.bench, around.now));
+        worked.outcome.notes.sort_by_key(|note| note.weight);
+        verdicts = requirements::verdicts(worked, drawn, read, &typed.requirements, units);
+    }
+    let figures =
+        result.as_ref().map(|worked| worked.outcome.figures.as_slice()).unwrap_or_default();
+    let requirements = requirements::all(figures, &verdicts, &around.before, read, units);
+    let wants_draws = drawn.is_none() && result.as_ref().is_ok_and(Worked::wants_draws);
     let (answer, waits, refusal) = match &result {
-        Ok(worked) => (Some(Answer::of(worked, units)), worked.outcome.waits.clone(), None),
+        Ok(worked) => {
+            let mut answer = Answer::of(worked, units);
+            answer.verdicts = verdicts;
+            answer.draws = drawn.map(|drawn| StoredDraws {
+                seed: SEED,
+                made: drawn.made,
+                saturated: drawn.saturated,
+            });
+            (Some(answer), worked.outcome.waits.clone(), None)
+        }
         Err(Stop::Waits(missing)) => (None, missing.clone(), None),
         Err(Stop::Refused(refusal)) => (None, Vec::new(), Some(refusal.as_ref())),
     };
-    let waits_says = says_waits(&waits, &read);
+    let waits_says = says_waits(&waits, read);
     let stage = match (&answer, refusal) {
         (_, Some(_)) => Stage::Refused,
         (Some(_), None) if waits.is_empty() => Stage::Solved,
         _ => Stage::Waiting,
     };
-    let sections = sections(&read, typed, around, units, &waits, refusal, answer.as_ref());
+    let sections = sections(read, typed, around, units, &waits, refusal, answer.as_ref());
     let pressure = pressure::here(&read.given).ok();
     let air = pressure.map(|here| {
         let amount = show(here.pressure.amount(), units.get(here.pressure.amount().kind())).text();
@@ -126,6 +204,8 @@ pub(crate) fn work(
             .as_ref()
             .map(|answer| result_view::states(answer, units))
             .unwrap_or_default(),
+        requirements,
+        wants_draws,
     };
     WorkedForm { solved, answer }
 }
@@ -206,9 +286,8 @@ struct Draw<'a> {
 
 impl Draw<'_> {
     fn section(&self, section: &Section) -> SectionView {
-        let begun = section
-            .reading_keys()
-            .any(|key| self.typed.readings.get(key).is_some_and(|r| !r.text.trim().is_empty()));
+        let begun =
+            section.reading_keys().any(|key| self.typed.readings.get(key).is_some_and(is_begun));
         let troubled = self.refusal.is_some_and(|refusal| self.holds(section, &refusal.field))
             || section.reading_keys().any(|key| self.read.errors.contains_key(key));
         let pressure = section.key == "pressure";
@@ -331,6 +410,19 @@ impl Draw<'_> {
             plus_minus_units: width_units.into_iter().map(unit_view).collect(),
             error: self.error(key),
             unusual,
+            with: with_view::view(
+                &with_view::Beside {
+                    sections: &self.read.sections,
+                    typed: self.typed,
+                    bench: &self.around.bench,
+                    units: self.units,
+                    now: self.around.now,
+                },
+                item,
+                self.read.with.get(key),
+                unit,
+            )
+            .map(Box::new),
         }
     }
 

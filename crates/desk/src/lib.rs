@@ -4,6 +4,8 @@
 //! computes and parses nothing. The only crate that knows JSON. No window, no socket.
 
 mod answer;
+mod bench;
+mod classes;
 mod clock;
 mod demo;
 mod desk;
@@ -11,14 +13,21 @@ mod drafts;
 mod entries;
 mod fault;
 mod form_view;
+mod instruments;
 mod overview;
 mod places;
+mod probe;
+mod read_with;
+mod remarks;
 mod reply;
 mod request;
+mod requirements;
 mod result_view;
+mod runs;
 mod typed;
 mod units;
 mod visits;
+mod with_view;
 
 pub mod air_rows;
 

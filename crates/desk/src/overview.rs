@@ -51,7 +51,10 @@ fn here(at: &Asked<'_>) -> Result<Option<Here>, Fault> {
             .find(|site| !site.withdrawn)
             .and_then(|site| match site.record {
                 RecordId::Site(id) => Some(id),
-                RecordId::Equipment(_) | RecordId::Visit(_) | RecordId::Entry(_) => None,
+                RecordId::Equipment(_)
+                | RecordId::Visit(_)
+                | RecordId::Entry(_)
+                | RecordId::Instrument(_) => None,
             }),
     };
     let Some(site) = site else { return Ok(None) };

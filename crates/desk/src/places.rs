@@ -8,6 +8,7 @@ use dewledger_properties::atmosphere;
 use dewledger_quantities::{Elevation, Entry, Kind as Quantities, Quantity, Unit, read, show};
 use serde::{Deserialize, Serialize};
 
+use crate::bench::Bench;
 use crate::clock;
 use crate::desk::{Asked, VERSION};
 use crate::entries;
@@ -90,36 +91,49 @@ pub(crate) fn around(
         Some(site) => site_head(at, site)?.body.invented,
         None => false,
     };
-    let was = match &place.equipment {
-        Some(equipment) => last_readings(at, equipment, check, but)?,
-        None => BTreeMap::new(),
+    let last = match &place.equipment {
+        Some(equipment) => last_filed(at, equipment, check, but)?,
+        None => None,
     };
-    Ok(Around { place: in_words(at, place)?, invented, pressure_known: place.site.is_some(), was })
+    let (was, before) = match last {
+        Some((typed, when)) => (
+            typed
+                .readings
+                .into_iter()
+                .map(|(key, reading)| (key, (reading, when.clone())))
+                .collect(),
+            typed.requirements.into_iter().map(|asked| (asked, when.clone())).collect(),
+        ),
+        None => (BTreeMap::new(), Vec::new()),
+    };
+    Ok(Around {
+        place: in_words(at, place)?,
+        invented,
+        pressure_known: place.site.is_some(),
+        was,
+        before,
+        bench: Bench::at(at, place)?,
+        now: at.now,
+    })
 }
 
-/// Readings of the newest entry of this check on this equipment.
-fn last_readings(
+/// What was typed for the newest entry of this check on this equipment, and its day.
+fn last_filed(
     at: &Asked<'_>,
     equipment: &str,
     check: &str,
     but: Option<&str>,
-) -> Result<BTreeMap<String, (TypedReading, String)>, Fault> {
+) -> Result<Option<(Typed, String)>, Fault> {
     for head in at.state.ledger.list(Kind::Entry, Within::Equipment(equipment_id(equipment)?))? {
         if head.withdrawn || but == Some(head.record.to_string().as_str()) {
             continue;
         }
         let Some(filed) = entries::filed(&head) else { continue };
         if filed.check == check {
-            let when = clock::day(head.at, at.now);
-            return Ok(filed
-                .typed
-                .readings
-                .into_iter()
-                .map(|(key, reading)| (key, (reading, when.clone())))
-                .collect());
+            return Ok(Some((filed.typed, clock::day(head.at, at.now))));
         }
     }
-    Ok(BTreeMap::new())
+    Ok(None)
 }
 
 /// What a place knows of a form that is not yet begun: the pressure of the visit, else the elevation of the site.
@@ -144,7 +158,7 @@ pub(crate) fn known_of(at: &Asked<'_>, place: &Place) -> Result<Typed, Fault> {
                 TypedReading {
                     text: known.elevation.text,
                     unit: known.elevation.unit,
-                    plus_minus: None,
+                    ..TypedReading::default()
                 },
             );
         }

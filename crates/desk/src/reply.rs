@@ -1,7 +1,16 @@
 //! What the desk answers: finished text beside every SI value, so that a screen computes nothing.
 
+mod doubt;
+mod instrument;
+
 use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
+
+pub use doubt::{
+    BeforeView, ConditionView, PartView, ReadWith, RequirableView, RequirementsView, RunRow,
+    RunView, TakeRow, TakesView, UsualSpot, VerdictView,
+};
+pub use instrument::{FieldError, InstrumentForm, InstrumentRow, InstrumentsView, ProbeForm};
 
 use crate::request::{Place, Preset, Theme, Typed};
 
@@ -56,6 +65,21 @@ pub enum Reply {
         /// The theme in use.
         theme: Theme,
     },
+    /// To `draw`, when a newer request ended it.
+    Overtaken {},
+    /// To `instruments`, `withdraw_instrument`.
+    Instruments(InstrumentsView),
+    /// To `instrument_form`.
+    InstrumentForm(Box<InstrumentForm>),
+    /// To `save_instrument`.
+    InstrumentSaved {
+        /// The instrument.
+        instrument: String,
+        /// What happened, in words.
+        says: String,
+    },
+    /// To `run_form`.
+    Run(Box<RunView>),
     /// To `about`.
     About(About),
 }
@@ -203,6 +227,10 @@ pub struct Solved {
     pub working: Vec<StepView>,
     /// The air states as a table, the equal of the chart.
     pub states: Vec<StateView>,
+    /// What is asked of the results, and the answers.
+    pub requirements: RequirementsView,
+    /// Some ± waits for draws: ask `draw` when typing rests.
+    pub wants_draws: bool,
 }
 
 /// One part of a form.
@@ -288,6 +316,8 @@ pub struct ReadingView {
     pub error: Option<Message>,
     /// An unusual note stands on it.
     pub unusual: bool,
+    /// What it was read with, where, and how often; none for definitions and settings.
+    pub with: Option<Box<ReadWith>>,
 }
 
 /// A sentence with what could be done about it.
@@ -429,8 +459,12 @@ pub struct ValueView {
 pub struct PlusMinusView {
     /// "± 3.1" in the unit of its value, or "± not known".
     pub text: String,
-    /// The 95 % half-width in SI; none when not known.
+    /// The 95 % half-width in SI; none when not known, and where an interval stands instead.
     pub si: Option<f64>,
+    /// "31.2 to 47.9, lopsided": stands instead of a ± that would mislead.
+    pub interval: Option<String>,
+    /// Draws are wanted before it can be said: ask `draw`.
+    pub pending: bool,
     /// The readings whose ± is missing.
     pub missing: Option<String>,
 }
@@ -440,6 +474,8 @@ pub struct PlusMinusView {
 pub struct Headline {
     /// "Heat removed, total".
     pub says: String,
+    /// Key of the figure; empty while there is none.
+    pub key: String,
     /// The figure; none is drawn as a dash.
     pub value: Option<ValueView>,
     /// Its ±.
@@ -750,6 +786,8 @@ pub struct VisitView {
     pub running: String,
     /// Pressure here, outdoor air.
     pub rows: Vec<ResultRow>,
+    /// Probes run side by side: index, title, and what was found.
+    pub runs: Vec<OptionView>,
     /// Invented example data.
     pub invented: bool,
     /// It is today's: checks can be started in it.
@@ -811,6 +849,8 @@ pub struct ReadingRow {
     pub text: String,
     /// Its ±.
     pub plus_minus: String,
+    /// Instrument, place and takes, in a line.
+    pub with: Option<String>,
 }
 
 /// A revision of an entry.

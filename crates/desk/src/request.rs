@@ -1,9 +1,15 @@
 //! What the screens, the terminal and scripts may ask. One request type; its JSON Schema stands in `docs/desk.schema.json`.
 
+mod doubt;
+mod instrument;
+
 use std::collections::BTreeMap;
 
 use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
+
+pub use doubt::{TypedRequirement, TypedRun, TypedRunRow, TypedSpot, TypedTake};
+pub use instrument::{TypedBand, TypedInstrument, TypedProbe};
 
 /// One request. Its kind is the member `ask`.
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
@@ -20,6 +26,17 @@ pub enum Request {
         /// What is typed so far.
         typed: Typed,
         /// Where the check is made; for last visit's figures beside the fields.
+        #[serde(default)]
+        place: Place,
+    },
+    /// Works a check out with draws where first order does not stand. Takes up to a second; a newer `solve` or `draw`
+    /// ends it, and the reply is then `overtaken`.
+    Draw {
+        /// Identifier of the check.
+        check: String,
+        /// What is typed so far.
+        typed: Typed,
+        /// Where the check is made.
         #[serde(default)]
         place: Place,
     },
@@ -164,6 +181,56 @@ pub enum Request {
         #[serde(default)]
         typed: Option<Typed>,
     },
+    /// The register of instruments.
+    Instruments {},
+    /// An instrument as a form: as it stands, a new one of a class, or what is typed so far. Stores nothing.
+    InstrumentForm {
+        /// The instrument; none for a new one.
+        #[serde(default)]
+        instrument: Option<String>,
+        /// The class that a new one starts from.
+        #[serde(default)]
+        class: Option<String>,
+        /// What is typed so far.
+        #[serde(default)]
+        typed: Option<TypedInstrument>,
+    },
+    /// Adds an instrument, or revises it. What was filed with it keeps the accuracy of its day.
+    SaveInstrument {
+        /// The instrument to revise; none to add.
+        #[serde(default)]
+        instrument: Option<String>,
+        /// As typed.
+        typed: TypedInstrument,
+    },
+    /// Takes an instrument out of use, or brings it back.
+    WithdrawInstrument {
+        /// The instrument.
+        instrument: String,
+        /// Out of use.
+        withdrawn: bool,
+    },
+    /// Probes side by side: one of the visit's runs, a new one, or what is typed so far. Stores nothing.
+    RunForm {
+        /// The visit.
+        visit: String,
+        /// Which of its runs; none for a new one.
+        #[serde(default)]
+        index: Option<usize>,
+        /// What is typed so far.
+        #[serde(default)]
+        typed: Option<TypedRun>,
+    },
+    /// Keeps a run of probes side by side with its visit.
+    SaveRun {
+        /// The visit.
+        visit: String,
+        /// Which of its runs to replace; none to add one.
+        #[serde(default)]
+        index: Option<usize>,
+        /// As typed.
+        typed: TypedRun,
+    },
     /// One filed entry, as it was filed.
     Entry {
         /// The entry.
@@ -224,6 +291,9 @@ pub struct Typed {
     /// Codes of unusual notes that the person has said to be right.
     #[serde(default)]
     pub accepted: Vec<String>,
+    /// What is asked of its results.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub requirements: Vec<TypedRequirement>,
 }
 
 /// One reading as typed.
@@ -238,6 +308,18 @@ pub struct TypedReading {
     /// Its ± (95 %), as typed; none or blank is not known.
     #[serde(default)]
     pub plus_minus: Option<TypedValue>,
+    /// The probe that it was read with, as `instrument/probe`; none is the one used last for it, an empty text none at all.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub probe: Option<String>,
+    /// How the probe was held; none is not said.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub spot: Option<TypedSpot>,
+    /// Its takes; with any, their mean is the reading, whatever `text` says.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub takes: Vec<TypedTake>,
+    /// Key of the reading to whose time this one is brought, from takes before and after it (A-B-A).
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub at_time_of: Option<String>,
 }
 
 /// A number with its unit, as typed.

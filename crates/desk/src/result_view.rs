@@ -53,29 +53,63 @@ fn value_of(figure: &StoredFigure, units: &UnitChoice) -> Option<ValueView> {
     Some(ValueView { si: figure.value.as_ref()?.si, ..view })
 }
 
-fn plus_minus(figure: &StoredFigure, units: &UnitChoice) -> Option<PlusMinusView> {
+/// Both ends of an interval as shown: to the second digit of its width, and in the sign that the label says.
+fn ends(figure: &StoredFigure, low: f64, high: f64, unit: &'static Unit) -> (String, String) {
+    let Some(value) = &figure.value else { return (String::new(), String::new()) };
+    let (low, high) = match (&figure.label_lost, value.si < 0.0) {
+        (Some(_), true) => (-high, -low),
+        _ => (low, high),
+    };
+    let half = 0.5 * (high - low);
+    let end = |si: f64| show_with(Amount::new(value.amount().kind(), si), half, unit).0.number;
+    (end(low), end(high))
+}
+
+fn plus_minus(figure: &StoredFigure, drawn: bool, units: &UnitChoice) -> Option<PlusMinusView> {
     let amount = figure.value.as_ref()?.amount();
     if !figure.unknown.is_empty() {
         return Some(PlusMinusView {
             text: "± not\u{a0}known".to_owned(),
             si: None,
+            interval: None,
+            pending: false,
             missing: Some(figure.unknown.join("; ")),
         });
     }
-    let half_width = figure.half_width_si?;
-    let (_, width) = show_with(amount, half_width, units.get(amount.kind()));
-    Some(PlusMinusView {
-        text: format!("± {}", width.number), si: Some(half_width), missing: None
+    let unit = units.get(amount.kind());
+    let view = |text: String| PlusMinusView {
+        text,
+        si: figure.half_width_si,
+        interval: None,
+        pending: false,
+        missing: None,
+    };
+    if let Some((low, high)) = figure.interval_si {
+        let (low, high) = ends(figure, low, high, unit);
+        let says = format!("{low} to {high}, lopsided");
+        return Some(PlusMinusView { interval: Some(says.clone()), ..view(says) });
+    }
+    if let Some(half_width) = figure.half_width_si {
+        let (_, width) = show_with(amount, half_width, unit);
+        return Some(view(format!("± {}", width.number)));
+    }
+    if !figure.wants_draws {
+        return None;
+    }
+    Some(if drawn {
+        view("no interval can be given".to_owned())
+    } else {
+        PlusMinusView { pending: true, ..view("± being worked out".to_owned()) }
     })
 }
 
-fn row(figure: &StoredFigure, units: &UnitChoice) -> ResultRow {
+fn row(figure: &StoredFigure, drawn: bool, units: &UnitChoice) -> ResultRow {
     ResultRow {
         key: figure.key.clone(),
         label: label(figure),
         condition: figure.condition.as_ref().map(|condition| condition.say(units)),
         value: value_of(figure, units),
-        plus_minus: plus_minus(figure, units),
+        plus_minus: plus_minus(figure, drawn, units),
         withheld: figure.withheld.as_ref().map(|why| why.say(units)),
         strong: figure.role == "headline",
     }
@@ -86,8 +120,9 @@ pub(crate) fn headline(answer: &Answer, waits: Option<&str>, units: &UnitChoice)
     let Some(figure) = answer.headline() else { return no_headline(waits) };
     Headline {
         says: label(figure),
+        key: figure.key.clone(),
         value: value_of(figure, units),
-        plus_minus: plus_minus(figure, units),
+        plus_minus: plus_minus(figure, answer.draws.is_some(), units),
         also: also(figure, units),
         why_not: if figure.value.is_some() {
             None
@@ -103,6 +138,7 @@ pub(crate) fn headline(answer: &Answer, waits: Option<&str>, units: &UnitChoice)
 pub(crate) fn no_headline(waits: Option<&str>) -> Headline {
     Headline {
         says: "Result".to_owned(),
+        key: String::new(),
         value: None,
         plus_minus: None,
         also: None,
@@ -177,7 +213,7 @@ pub(crate) fn groups(answer: &Answer, units: &UnitChoice) -> Vec<ResultGroup> {
     let mut groups: Vec<ResultGroup> = Vec::new();
     let mut further = Vec::new();
     for figure in &answer.figures {
-        let row = row(figure, units);
+        let row = row(figure, answer.draws.is_some(), units);
         if figure.role == "detail" {
             further.push(row);
             continue;
@@ -406,7 +442,11 @@ pub(crate) fn in_a_line(answer: &Answer, units: &UnitChoice) -> String {
     } else {
         format!("{}\u{a0}{}", view.number, view.unit)
     };
-    let plus_minus = plus_minus(figure, units).filter(|plus_minus| plus_minus.si.is_some());
-    let tail = plus_minus.map_or_else(String::new, |plus_minus| format!(" {}", plus_minus.text));
+    let tail = plus_minus(figure, answer.draws.is_some(), units)
+        .filter(|plus_minus| plus_minus.si.is_some() || plus_minus.interval.is_some())
+        .map_or_else(String::new, |plus_minus| match plus_minus.interval {
+            Some(interval) => format!(" ({interval})"),
+            None => format!(" {}", plus_minus.text),
+        });
     format!("{}: {number}{tail}", label(figure))
 }

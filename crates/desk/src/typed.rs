@@ -8,6 +8,8 @@ use dewledger_quantities::{
     Entry, PlusMinus, ReadError, Unit, UnitChoice, read, read_plus_minus, show,
 };
 
+use crate::bench::Bench;
+use crate::read_with::{self, With};
 use crate::reply::{Act, Change, Message};
 use crate::request::{Typed, TypedReading, TypedValue};
 
@@ -19,53 +21,85 @@ pub(crate) struct Readout {
     pub(crate) errors: BTreeMap<String, Message>,
     /// "read as 17.1", by key of the reading.
     pub(crate) echoes: BTreeMap<String, String>,
+    /// What each was read with, where and how often, by key of the reading.
+    pub(crate) with: BTreeMap<String, With>,
 }
 
 /// Asks of a form, which may change with what is given: the check's own, or the visit's.
 pub(crate) type Form<'a> = dyn Fn(&Given) -> Vec<Section> + 'a;
 
 /// Reads a check's form.
-pub(crate) fn read_check(check: &dyn Check, typed: &Typed, units: &UnitChoice) -> Readout {
-    read_form(&|given| check.form(given), typed, units)
+pub(crate) fn read_check(
+    check: &dyn Check,
+    typed: &Typed,
+    units: &UnitChoice,
+    bench: &Bench,
+) -> Readout {
+    read_form(&|given| check.form(given), typed, units, bench)
 }
 
 /// Reads any form. Kinds of readings depend on choices and on other readings, so a second pass follows the first.
-pub(crate) fn read_form(form: &Form<'_>, typed: &Typed, units: &UnitChoice) -> Readout {
+pub(crate) fn read_form(
+    form: &Form<'_>,
+    typed: &Typed,
+    units: &UnitChoice,
+    bench: &Bench,
+) -> Readout {
     let mut given = Given::default();
     for (key, value) in &typed.choices {
         given.choose(key, value);
     }
-    let mut readout = pass(form(&given), &given, typed, units);
+    let mut readout = pass(form(&given), &given, typed, units, bench);
     let sections = form(&readout.given);
     if sections != readout.sections {
-        readout = pass(sections, &given, typed, units);
+        readout = pass(sections, &given, typed, units, bench);
         readout.sections = form(&readout.given);
     }
     readout
 }
 
-fn pass(sections: Vec<Section>, choices: &Given, typed: &Typed, units: &UnitChoice) -> Readout {
-    let mut given = choices.clone();
-    let (mut errors, mut echoes) = (BTreeMap::new(), BTreeMap::new());
+fn pass(
+    sections: Vec<Section>,
+    choices: &Given,
+    typed: &Typed,
+    units: &UnitChoice,
+    bench: &Bench,
+) -> Readout {
+    let mut readout = Readout {
+        given: choices.clone(),
+        sections: Vec::new(),
+        errors: BTreeMap::new(),
+        echoes: BTreeMap::new(),
+        with: BTreeMap::new(),
+    };
     for section in &sections {
         for item in &section.items {
             let Item::Reading(item) = item else { continue };
-            let Some(reading) = typed.readings.get(item.key.as_ref()) else { continue };
-            match read_one(item, reading, units) {
-                Ok(Some((reading, echo))) => {
-                    given.put(item.key.as_ref(), reading);
-                    if let Some(echo) = echo {
-                        echoes.insert(item.key.to_string(), echo);
+            let key = item.key.as_ref();
+            let Some(reading) = typed.readings.get(key) else { continue };
+            match read_one(item, reading, typed, units, bench) {
+                Ok(Some(one)) => {
+                    readout.given.put(key, one.reading);
+                    readout.with.insert(key.to_owned(), one.with);
+                    if let Some(echo) = one.echo {
+                        readout.echoes.insert(key.to_owned(), echo);
                     }
                 }
                 Ok(None) => {}
                 Err(says) => {
-                    errors.insert(item.key.to_string(), says);
+                    readout.errors.insert(key.to_owned(), says);
                 }
             }
         }
     }
-    Readout { given, sections, errors, echoes }
+    read_with::together(&mut readout.with);
+    for (key, with) in &readout.with {
+        if !with.parts.is_empty() {
+            readout.given.doubt_by(key, with.parts.clone());
+        }
+    }
+    readout.sections = sections;
+    readout
 }
 
 /// The unit that a reading is typed in: its own, else the one chosen for its quantity.
@@ -133,49 +167,88 @@ fn message(item: &ReadingItem, unit: &Unit, error: &ReadError) -> Message {
 
 /// The same, with the unit of every reading written beside it, so that a later choice of units does not change what
 /// it says. Blank readings are left out.
-pub(crate) fn spelt_out(form: &Form<'_>, mut typed: Typed, units: &UnitChoice) -> Typed {
-    let read = read_form(form, &typed, units);
+pub(crate) fn spelt_out(
+    form: &Form<'_>,
+    mut typed: Typed,
+    units: &UnitChoice,
+    bench: &Bench,
+) -> Typed {
+    let read = read_form(form, &typed, units, bench);
     for section in &read.sections {
         for item in &section.items {
             let Item::Reading(item) = item else { continue };
-            let unit = unit_of(item, typed.readings.get(item.key.as_ref()), units);
-            if let Some(reading) = typed.readings.get_mut(item.key.as_ref()) {
+            let key = item.key.as_ref();
+            let unit = unit_of(item, typed.readings.get(key), units);
+            let probe = bench.used(key, item.kind, &typed).map(|probe| probe.id.clone());
+            if let Some(reading) = typed.readings.get_mut(key) {
                 reading.unit = Some(unit.id.to_owned());
+                // A form opened again must not take up a probe that came to hand since.
+                if read_with::asked_of(item) && read.given.reading(key).is_some() {
+                    reading.probe = Some(probe.unwrap_or_default());
+                }
             }
         }
     }
-    typed.readings.retain(|_, reading| {
-        let doubted =
-            reading.plus_minus.as_ref().is_some_and(|width| !width.text.trim().is_empty());
-        doubted || !reading.text.trim().is_empty()
-    });
+    typed.readings.retain(|_, reading| is_begun(reading));
     typed
 }
 
-type One = Option<(Reading, Option<String>)>;
+/// Whether anything of a reading is typed.
+pub(crate) fn is_begun(reading: &TypedReading) -> bool {
+    let doubted = reading.plus_minus.as_ref().is_some_and(|width| !width.text.trim().is_empty());
+    doubted || !reading.text.trim().is_empty() || !reading.takes.is_empty()
+}
 
-fn read_one(item: &ReadingItem, typed: &TypedReading, units: &UnitChoice) -> Result<One, Message> {
+/// A reading, read.
+struct One {
+    reading: Reading,
+    with: With,
+    echo: Option<String>,
+}
+
+fn read_one(
+    item: &ReadingItem,
+    typed: &TypedReading,
+    form: &Typed,
+    units: &UnitChoice,
+    bench: &Bench,
+) -> Result<Option<One>, Message> {
     let unit = unit_of(item, Some(typed), units);
-    let number =
-        match read(item.kind, &typed.text, unit).map_err(|error| message(item, unit, &error))? {
-            Entry::NotRead => return Ok(None),
-            Entry::Read(number) => number,
-        };
-    let mut reading =
-        Reading { amount: number.amount, unit: Some(number.unit), half_width_si: None };
-    if let Some(plus_minus) = &typed.plus_minus {
-        let unit = plus_minus_unit(item, Some(typed), units);
-        let text = plus_minus_text(item, plus_minus);
-        reading.half_width_si = match read_plus_minus(item.kind, &text, unit) {
-            Ok(None) => None,
-            Ok(Some(PlusMinus::Absolute(half_width))) => Some(half_width),
-            Ok(Some(PlusMinus::Relative(share))) => Some(share * number.amount.si().abs()),
-            Err(error) => {
-                return Err(Message { says: format!("The ±: {error}"), acts: Vec::new() });
-            }
-        };
+    let mut with = With::of(item, typed, form, unit, bench)?;
+    let (amount, unit, echo) = match with.mean_si {
+        Some(si) => (dewledger_quantities::Amount::new(item.kind, si), unit, None),
+        None => {
+            let number = match read(item.kind, &typed.text, unit)
+                .map_err(|error| message(item, unit, &error))?
+            {
+                Entry::NotRead => return Ok(None),
+                Entry::Read(number) => number,
+            };
+            let echo = (number.comma || number.unit_typed)
+                .then(|| format!("read as {}", show(number.amount, number.unit).text()));
+            (number.amount, number.unit, echo)
+        }
+    };
+    let half_width = plus_minus(item, typed, units, amount.si())?;
+    let amount = with.finish(item, typed, amount, half_width, unit, bench)?;
+    let reading = Reading { amount, unit: Some(unit), half_width_si: half_width };
+    Ok(Some(One { reading, with, echo }))
+}
+
+/// The typed ± as a half-width in stored SI.
+fn plus_minus(
+    item: &ReadingItem,
+    typed: &TypedReading,
+    units: &UnitChoice,
+    value_si: f64,
+) -> Result<Option<f64>, Message> {
+    let Some(plus_minus) = &typed.plus_minus else { return Ok(None) };
+    let unit = plus_minus_unit(item, Some(typed), units);
+    let text = plus_minus_text(item, plus_minus);
+    match read_plus_minus(item.kind, &text, unit) {
+        Ok(None) => Ok(None),
+        Ok(Some(PlusMinus::Absolute(half_width))) => Ok(Some(half_width)),
+        Ok(Some(PlusMinus::Relative(share))) => Ok(Some(share * value_si.abs())),
+        Err(error) => Err(Message { says: format!("The ±: {error}"), acts: Vec::new() }),
     }
-    let echo = (number.comma || number.unit_typed)
-        .then(|| format!("read as {}", show(number.amount, number.unit).text()));
-    Ok(Some((reading, echo)))
 }

@@ -63,6 +63,11 @@ const EVERYDAY: &[(Kind, f64)] = &[
     (Kind::LatentConstant, 3.01e6),
 ];
 
+/// An everyday value of a quantity, SI; 1 where none is known.
+pub(crate) fn everyday(kind: Kind) -> f64 {
+    EVERYDAY.iter().find(|(known, _)| *known == kind).map_or(1.0, |(_, si)| *si)
+}
+
 pub(crate) fn view(units: &UnitChoice) -> UnitsView {
     let preset = units.preset().map(|preset| match preset {
         dewledger_quantities::Preset::Ip => Preset::Ip,

@@ -7,6 +7,7 @@ use dewledger_quantities::{Kind as Quantities, Quantity, show};
 use serde::{Deserialize, Serialize};
 
 use crate::answer::act;
+use crate::bench::Bench;
 use crate::clock;
 use crate::desk::{Asked, VERSION};
 use crate::entries;
@@ -16,6 +17,7 @@ use crate::reply::{
     Fault, NoteView, Reply, ResultRow, Tone, ValueView, VisitFormView, VisitRow, VisitView,
 };
 use crate::request::{Place, Typed};
+use crate::runs::{self, KeptRun};
 use crate::typed::{read_form, spelt_out};
 
 /// A visit's body.
@@ -29,6 +31,9 @@ pub(crate) struct VisitBody {
     pub(crate) running: String,
     #[serde(default)]
     pub(crate) typed: Typed,
+    /// Probes run side by side.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub(crate) runs: Vec<KeptRun>,
 }
 
 /// A visit as typed.
@@ -85,7 +90,7 @@ pub(crate) fn rows(at: &Asked<'_>, site: SiteId) -> Result<Vec<VisitRow>, Fault>
         if !known.people.is_empty() {
             says.push(known.people.clone());
         }
-        let read = read_form(&visit_sections, &known.typed, &at.state.units);
+        let read = read_form(&visit_sections, &known.typed, &at.state.units, &Bench::default());
         if let Some(reading) = read.given.reading(OUTDOOR_T) {
             let outside = show(reading.amount, at.state.units.get(Quantities::Temperature)).text();
             says.push(format!("{outside} outside"));
@@ -115,7 +120,7 @@ pub(crate) fn visit(at: &Asked<'_>, visit: &str) -> Result<Reply, Fault> {
     let site_head = at.state.ledger.head(RecordId::Site(site))?;
     let began = started(&head);
     let units = &at.state.units;
-    let read = read_form(&visit_sections, &known.typed, units);
+    let read = read_form(&visit_sections, &known.typed, units, &Bench::default());
     let row = |key: &str,
                label: &str,
                amount: dewledger_quantities::Amount,
@@ -160,6 +165,7 @@ pub(crate) fn visit(at: &Asked<'_>, visit: &str) -> Result<Reply, Fault> {
         },
         site: site_head.body.title,
         when: format!("{}, {}", clock::full_day(began), clock::time(began)),
+        runs: runs::rows(at, &known),
         people: known.people,
         running: known.running,
         rows,
@@ -187,7 +193,8 @@ pub(crate) fn form(
         },
     };
     let typed = typed.unwrap_or_else(|| known.typed.clone());
-    let read = read_form(&visit_sections, &typed, &at.state.units);
+    let bench = Bench::at(at, &Place::default())?;
+    let read = read_form(&visit_sections, &typed, &at.state.units, &bench);
     let here = pressure::here(&read.given);
     let refusal = match &here {
         Err(Stop::Refused(refusal)) => Some(refusal.as_ref()),
@@ -213,7 +220,8 @@ pub(crate) fn form(
             .collect(),
         Err(_) => Vec::new(),
     };
-    let sections = sections(&read, &typed, &Around::default(), &at.state.units, &[], refusal, None);
+    let sections =
+        sections(&read, &typed, &Around::bare(bench, at.now), &at.state.units, &[], refusal, None);
     Ok(Reply::VisitForm(VisitFormView {
         visit: visit.map(str::to_owned),
         site: site.to_owned(),
@@ -232,7 +240,8 @@ pub(crate) fn save(
     site: &str,
     typed: VisitTyped,
 ) -> Result<Reply, Fault> {
-    let read = read_form(&visit_sections, &typed.typed, &at.state.units);
+    let bench = Bench::at(at, &Place::default())?;
+    let read = read_form(&visit_sections, &typed.typed, &at.state.units, &bench);
     if let Some((field, message)) = read.errors.iter().next() {
         return Err(Fault::at(field.clone(), message.says.clone()));
     }
@@ -247,7 +256,8 @@ pub(crate) fn save(
         started_ms,
         people: typed.people.trim().to_owned(),
         running: typed.running.trim().to_owned(),
-        typed: spelt_out(&visit_sections, typed.typed, &at.state.units),
+        typed: spelt_out(&visit_sections, typed.typed, &at.state.units, &bench),
+        runs: before.as_ref().map(|head| body::<VisitBody>(head).runs).unwrap_or_default(),
     })?;
     let new = Body {
         site: Some(id),
@@ -272,7 +282,7 @@ pub(crate) fn elevation_of(head: &Head) -> Option<f64> {
 /// The pressure of a visit in a line.
 pub(crate) fn pressure_line(at: &Asked<'_>, visit: &str) -> Result<Option<String>, Fault> {
     let known: VisitBody = body(&head(at, visit)?);
-    let read = read_form(&visit_sections, &known.typed, &at.state.units);
+    let read = read_form(&visit_sections, &known.typed, &at.state.units, &Bench::default());
     Ok(pressure::here(&read.given).ok().map(|here| {
         let amount = here.pressure.amount();
         let text = show(amount, at.state.units.get(amount.kind())).text();

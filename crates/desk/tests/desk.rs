@@ -83,7 +83,7 @@ fn typed(choices: &[(&str, &str)], readings: &[(&str, &str, &str)]) -> Typed {
         let unit = (!unit.is_empty()).then(|| (*unit).to_owned());
         typed.readings.insert(
             (*key).to_owned(),
-            TypedReading { text: (*text).to_owned(), unit, plus_minus: None },
+            TypedReading { text: (*text).to_owned(), unit, ..TypedReading::default() },
         );
     }
     typed
@@ -137,8 +137,11 @@ fn without(mut typed: Typed, key: &str) -> Typed {
 }
 
 fn with(mut typed: Typed, key: &str, text: &str, unit: &str) -> Typed {
-    let reading =
-        TypedReading { text: text.to_owned(), unit: Some(unit.to_owned()), plus_minus: None };
+    let reading = TypedReading {
+        text: text.to_owned(),
+        unit: Some(unit.to_owned()),
+        ..TypedReading::default()
+    };
     typed.readings.insert(key.to_owned(), reading);
     typed
 }
@@ -487,9 +490,14 @@ fn the_demo_site_is_invented_and_filled() {
         };
         assert_eq!(view.solved.stage, Stage::Solved, "{}", view.solved.check.label);
         assert!(
-            view.solved.headline.plus_minus.as_ref().is_some_and(|pm| pm.si.is_some()),
-            "{}",
-            entry.label
+            view.solved
+                .headline
+                .plus_minus
+                .as_ref()
+                .is_some_and(|pm| pm.si.is_some() || pm.interval.is_some()),
+            "{}: {:?}",
+            entry.label,
+            view.solved.headline
         );
         assert!(!view.solved.notes.iter().any(|note| note.tone == Tone::Impossible));
     }
