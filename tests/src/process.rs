@@ -1,6 +1,7 @@
-//! Processes that end with their test.
+//! Processes that end with their test, and whatever they started with them.
 
 use std::fs::File;
+use std::os::unix::process::CommandExt;
 use std::path::{Path, PathBuf};
 use std::process::{Child, Command, Stdio};
 use std::time::{Duration, Instant};
@@ -17,7 +18,8 @@ pub fn program(name: &str) -> PathBuf {
     program
 }
 
-/// A process that is asked to end, and then ended, when its test is over.
+/// A process that is asked to end, and then ended, when its test is over. It leads a group of its own, so that what it
+/// started ends too: a driver that is ended leaves its browser behind.
 #[derive(Debug)]
 pub struct Ended(Child);
 
@@ -27,24 +29,27 @@ impl Ended {
     pub fn start(command: &mut Command, log: &Path) -> Self {
         let out = File::create(log).expect("the test's folder can be written");
         let errors = out.try_clone().expect("a file can be shared");
-        command.stdin(Stdio::null()).stdout(out).stderr(errors);
+        command.stdin(Stdio::null()).stdout(out).stderr(errors).process_group(0);
         Self(command.spawn().unwrap_or_else(|error| panic!("{command:?} does not start: {error}")))
     }
 
-    /// Ends it as a kill would: at once, without asking.
+    /// Ends it and all it started as a kill would: at once, without asking.
     pub fn kill(&mut self) {
-        let _ = self.0.kill();
+        self.signal("KILL");
         let _ = self.0.wait();
     }
 
-    /// Asks it to end, waits a little, then ends it.
+    fn signal(&self, name: &str) {
+        let group = format!("-{}", self.0.id());
+        let _ =
+            Command::new("kill").args(["-s", name, "--", &group]).stderr(Stdio::null()).status();
+    }
+
+    /// Asks it to end, waits a little, then ends it with all it started.
     fn end(&mut self) {
-        let _ = Command::new("kill").arg(self.0.id().to_string()).stderr(Stdio::null()).status();
+        self.signal("TERM");
         let until = Instant::now() + Duration::from_secs(5);
-        while Instant::now() < until {
-            if matches!(self.0.try_wait(), Ok(Some(_)) | Err(_)) {
-                return;
-            }
+        while Instant::now() < until && matches!(self.0.try_wait(), Ok(None)) {
             std::thread::sleep(Duration::from_millis(20));
         }
         self.kill();
