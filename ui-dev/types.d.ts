@@ -18,6 +18,14 @@ declare namespace Desk {
     label: string;
   };
 
+  /** A requirement that was typed on an earlier entry of this equipment. */
+  type BeforeView = {
+    /** What it types. */
+    requirement: TypedRequirement;
+    /** "Total at least 48 kW (schedule M-601), asked on 3 November". */
+    says: string;
+  };
+
   /** A caution. */
   type CautionView = {
     /** The text. */
@@ -104,6 +112,18 @@ declare namespace Desk {
     options: Array<OptionView>;
     /** The value chosen or standing by default; none must be chosen. */
     value?: string | null;
+  };
+
+  /** A reading that the conditions of a rating can name. */
+  type ConditionView = {
+    /** Its key. */
+    key: string;
+    /** "Entering air, dry bulb". */
+    label: string;
+    /** The unit chosen for it. */
+    unit: UnitView;
+    /** All units of its quantity. */
+    units: Array<UnitView>;
   };
 
   /** An unfinished form. */
@@ -221,6 +241,14 @@ declare namespace Desk {
     | "ledger_refused"
     | "not_stored";
 
+  /** Something wrong with a field that is no reading. */
+  type FieldError = {
+    /** Its place. */
+    field: string;
+    /** What is wrong and what mends it. */
+    says: string;
+  };
+
   /** A field of a form. */
   type FieldView = ReadingView & {
       field: "reading";
@@ -256,6 +284,8 @@ declare namespace Desk {
   type Headline = {
     /** A second figure in small: "11.7 refrigeration tons". */
     also?: string | null;
+    /** Key of the figure; empty while there is none. */
+    key: string;
     /** The small line under the bar: sensible, latent, SHR. */
     minor: Array<MinorView>;
     /** Its ±. */
@@ -280,6 +310,52 @@ declare namespace Desk {
     says: string;
     /** The site's name. */
     site: string;
+  };
+
+  /** An instrument as a form, with what its statement comes to. */
+  type InstrumentForm = {
+    /** What the width of a statement can mean. */
+    coverages: Array<OptionView>;
+    /** What is wrong, with the place: `name`, `probes.0.bands.1.absolute`. */
+    errors: Array<FieldError>;
+    /** The instrument; none for a new one. */
+    instrument?: string | null;
+    /** One for each probe. */
+    probes: Array<ProbeForm>;
+    /** The quantities that a probe can read. */
+    quantities: Array<OptionView>;
+    /** As it stands. */
+    typed: TypedInstrument;
+    /** Taken out of use. */
+    withdrawn: boolean;
+  };
+
+  /** One instrument in a list. */
+  type InstrumentRow = {
+    /** "calibration due 3 March", "overdue since …"; none when no date is known. */
+    due?: string | null;
+    /** Its identity. */
+    instrument: string;
+    /** Invented example data. */
+    invented: boolean;
+    /** Its name. */
+    name: string;
+    /** A calibration is overdue. */
+    overdue: boolean;
+    /** Serial and probes, in a line. */
+    says: string;
+    /** Taken out of use. */
+    withdrawn: boolean;
+  };
+
+  /** The register. */
+  type InstrumentsView = {
+    /** Starting entries by class, their figures common practice: the instrument's own paper overrides them. */
+    classes: Array<OptionView>;
+    /** By name. */
+    instruments: Array<InstrumentRow>;
+    /** A sentence above the classes. */
+    says: string;
   };
 
   /** Letter and shape of a place, the same on chart, form and report. */
@@ -350,6 +426,14 @@ declare namespace Desk {
     sites: Array<SiteRow>;
   };
 
+  /** One part of a reading's ±. */
+  type PartView = {
+    /** "Calibration, shared with other readings of this probe". */
+    label: string;
+    /** "± 0.18 K". */
+    text: string;
+  };
+
   /** Where a check is made. */
   type Place = {
     /** The equipment at that site. */
@@ -362,9 +446,13 @@ declare namespace Desk {
 
   /** A ± as shown. */
   type PlusMinusView = {
+    /** "31.2 to 47.9, lopsided": stands instead of a ± that would mislead. */
+    interval?: string | null;
     /** The readings whose ± is missing. */
     missing?: string | null;
-    /** The 95 % half-width in SI; none when not known. */
+    /** Draws are wanted before it can be said: ask `draw`. */
+    pending: boolean;
+    /** The 95 % half-width in SI; none when not known, and where an interval stands instead. */
     si?: number | null;
     /** "± 3.1" in the unit of its value, or "± not known". */
     text: string;
@@ -372,6 +460,42 @@ declare namespace Desk {
 
   /** A set of units chosen at once. */
   type Preset = "ip" | "si";
+
+  /** What surrounds one probe's fields. */
+  type ProbeForm = {
+    /** "± 0.2 °C at 20 °C (95 %), of which ± 0.18 °C is calibration". */
+    comes_to?: string | null;
+    /** Ways of reading that matter for its quantity: key, label, options. */
+    reads: Array<ChoiceView>;
+    /** What the ± of its statement is typed in: "°C". */
+    unit: string;
+    /** Units of its quantity. */
+    units: Array<UnitView>;
+  };
+
+  /** Beside a reading: what it was read with, where, and how often. */
+  type ReadWith = {
+    /** "13.4 °C as read, 13.2 °C after the side-by-side run". */
+    corrected?: string | null;
+    /** Ways of holding it. */
+    held: Array<OptionView>;
+    /** Its name, or "no instrument named". */
+    label: string;
+    /** What the ± is made of, with half-widths: calibration, the reading itself, its place, scatter. */
+    parts: Array<PartView>;
+    /** The probe in use, as `instrument/probe`; none where no instrument is named. */
+    probe?: string | null;
+    /** Probes that can read it; the first option, with an empty value, is none. */
+    probes: Array<OptionView>;
+    /** How it was held, as typed. */
+    spot: TypedSpot;
+    /** The unit of a spread or a ± of the place. */
+    spread_unit: UnitView;
+    /** Takes. */
+    takes: TakesView;
+    /** Usual figures for the place, common practice: one tap each, never applied unasked. */
+    usual: Array<UsualSpot>;
+  };
 
   /** A reading of a filed entry. */
   type ReadingRow = {
@@ -381,6 +505,8 @@ declare namespace Desk {
     plus_minus: string;
     /** As typed, with its unit. */
     text: string;
+    /** Instrument, place and takes, in a line. */
+    with?: string | null;
   };
 
   /** A number to type. */
@@ -423,6 +549,8 @@ declare namespace Desk {
     unusual: boolean;
     /** Last visit's reading at the same place, for a pull button. */
     was?: WasView | null;
+    /** What it was read with, where, and how often; none for definitions and settings. */
+    with?: ReadWith | null;
   };
 
   /** One reply. Its kind is the member `reply`. */
@@ -484,6 +612,25 @@ declare namespace Desk {
       /** The theme in use. */
       theme: Theme;
     }
+    | {
+      reply: "overtaken";
+    }
+    | InstrumentsView & {
+      reply: "instruments";
+    }
+    | InstrumentForm & {
+      reply: "instrument_form";
+    }
+    | {
+      /** The instrument. */
+      instrument: string;
+      reply: "instrument_saved";
+      /** What happened, in words. */
+      says: string;
+    }
+    | RunView & {
+      reply: "run";
+    }
     | About & {
       reply: "about";
     };
@@ -501,6 +648,15 @@ declare namespace Desk {
       /** Identifier of the check, as `air_heat`. */
       check: string;
       /** Where the check is made; for last visit's figures beside the fields. */
+      place?: Place;
+      /** What is typed so far. */
+      typed: Typed;
+    }
+    | {
+      ask: "draw";
+      /** Identifier of the check. */
+      check: string;
+      /** Where the check is made. */
       place?: Place;
       /** What is typed so far. */
       typed: Typed;
@@ -633,6 +789,50 @@ declare namespace Desk {
       visit?: string | null;
     }
     | {
+      ask: "instruments";
+    }
+    | {
+      ask: "instrument_form";
+      /** The class that a new one starts from. */
+      class?: string | null;
+      /** The instrument; none for a new one. */
+      instrument?: string | null;
+      /** What is typed so far. */
+      typed?: TypedInstrument | null;
+    }
+    | {
+      ask: "save_instrument";
+      /** The instrument to revise; none to add. */
+      instrument?: string | null;
+      /** As typed. */
+      typed: TypedInstrument;
+    }
+    | {
+      ask: "withdraw_instrument";
+      /** The instrument. */
+      instrument: string;
+      /** Out of use. */
+      withdrawn: boolean;
+    }
+    | {
+      ask: "run_form";
+      /** Which of its runs; none for a new one. */
+      index?: number | null;
+      /** What is typed so far. */
+      typed?: TypedRun | null;
+      /** The visit. */
+      visit: string;
+    }
+    | {
+      ask: "save_run";
+      /** Which of its runs to replace; none to add one. */
+      index?: number | null;
+      /** As typed. */
+      typed: TypedRun;
+      /** The visit. */
+      visit: string;
+    }
+    | {
       ask: "entry";
       /** The entry. */
       entry: string;
@@ -666,6 +866,34 @@ declare namespace Desk {
     | {
       ask: "about";
     };
+
+  /** A result that something can be asked of. */
+  type RequirableView = {
+    /** Its key. */
+    figure: string;
+    /** "Heat removed, total". */
+    label: string;
+    /** The unit chosen for it. */
+    unit: UnitView;
+    /** All units of its quantity. */
+    units: Array<UnitView>;
+    /** The unit of a tolerance: its difference's. */
+    width_unit: UnitView;
+  };
+
+  /** What is asked of a check's results, and the answers. */
+  type RequirementsView = {
+    /** Requirements that this equipment was held to before: one tap takes one over. */
+    before: Array<BeforeView>;
+    /** Readings that the conditions of a rating can name. */
+    conditions: Array<ConditionView>;
+    /** Directions, in the order of the sheet. */
+    directions: Array<OptionView>;
+    /** Results that something can be asked of. */
+    figures: Array<RequirableView>;
+    /** One for each requirement typed, in the same order. */
+    verdicts: Array<VerdictView>;
+  };
 
   /** A group of results. */
   type ResultGroup = {
@@ -705,6 +933,40 @@ declare namespace Desk {
     figure: string;
     /** "14:20, first", "15:02, corrected". */
     says: string;
+  };
+
+  /** One probe in a run. */
+  type RunRow = {
+    /** What is wrong with the text. */
+    error?: string | null;
+    /** Its name. */
+    label: string;
+    /** "0.3 K above" what it is held against; none while it is not read. */
+    offset?: string | null;
+    /** The probe. */
+    probe: string;
+    /** As typed. */
+    text: string;
+    /** Further apart than both accuracies allow: it wants calibration. */
+    too_far: boolean;
+    /** The unit it is typed in. */
+    unit: UnitView;
+  };
+
+  /** A run of probes side by side, worked out. */
+  type RunView = {
+    /** Which one of the visit's. */
+    index?: number | null;
+    /** Quantities that two or more probes can read. */
+    quantities: Array<OptionView>;
+    /** One for each probe that can read the quantity. */
+    rows: Array<RunRow>;
+    /** What it comes to, or what is missing. */
+    says: string;
+    /** "Temperature, at the start, 14:05". */
+    title: string;
+    /** As typed. */
+    typed: TypedRun;
   };
 
   /** One part of a form. */
@@ -783,6 +1045,8 @@ declare namespace Desk {
     invented: boolean;
     /** Remarks on single readings and on the whole, in order of weight. */
     notes: Array<NoteView>;
+    /** What is asked of the results, and the answers. */
+    requirements: RequirementsView;
     /** The form, in order. */
     sections: Array<SectionView>;
     /** How far it has come. */
@@ -795,6 +1059,8 @@ declare namespace Desk {
     versus: Array<Versus>;
     /** "waits for air flow", when something is missing. */
     waits?: string | null;
+    /** Some ± waits for draws: ask `draw` when typing rests. */
+    wants_draws: boolean;
     /** Formula with numbers put in. */
     working: Array<StepView>;
   };
@@ -837,6 +1103,34 @@ declare namespace Desk {
     title: string;
   };
 
+  /** One take. */
+  type TakeRow = {
+    /** "14:05:20". */
+    at: string;
+    /** What is wrong with it. */
+    error?: string | null;
+    /** As typed. */
+    text: string;
+  };
+
+  /** The takes of a reading. */
+  type TakesView = {
+    /** Readings whose time this one can be brought to (A-B-A); the first option, with an empty value, is none. */
+    at_time_of: Array<OptionView>;
+    /** The one chosen. */
+    at_time_of_value: string;
+    /** "13.20", what stands in the field; none without takes. */
+    mean?: string | null;
+    /** In the order they were made. */
+    rows: Array<TakeRow>;
+    /** "Mean of 4 takes in 60 s: 13.20 °C, scatter 0.08 K"; none without takes. */
+    says?: string | null;
+    /** `steady`, `drifting`, `hunting` or `not_judged`; none without takes. */
+    steadiness?: string | null;
+    /** "Steady", "Drifting", "Hunting", "Not judged". */
+    word?: string | null;
+  };
+
   /** How the screens look. */
   type Theme = 
     | "system"
@@ -859,16 +1153,148 @@ declare namespace Desk {
     choices?: Record<string, string>;
     /** Readings by key: `entering.dry_bulb` → text and unit. A blank or missing one is not read. */
     readings?: Record<string, TypedReading>;
+    /** What is asked of its results. */
+    requirements?: Array<TypedRequirement>;
+  };
+
+  /** One band of an accuracy statement, as printed. */
+  type TypedBand = {
+    /** ± this much, in the probe's unit. */
+    absolute?: string;
+    /** ± this many steps of the display. */
+    counts?: string;
+    /** The greater of the fixed part and the share of the reading counts, not their sum. */
+    greater?: boolean;
+    /** ± this many per cent of the range. */
+    of_range?: string;
+    /** ± this many per cent of the reading. */
+    of_reading?: string;
+    /** Up to this reading; blank in the last one. */
+    up_to?: string;
+  };
+
+  /** An instrument as typed. */
+  type TypedInstrument = {
+    /** What the team calls it. */
+    name?: string;
+    /** Anything worth knowing. */
+    note?: string;
+    /** Its probes; an instrument that reads one thing has one. */
+    probes?: Array<TypedProbe>;
+    /** Its serial number. */
+    serial?: string;
+  };
+
+  /** A probe, or the one channel of an instrument without any. */
+  type TypedProbe = {
+    /** Bands of its accuracy statement, the narrowest first. */
+    bands?: Array<TypedBand>;
+    /** When it was calibrated last, as `2026-03-01`. */
+    calibrated?: string;
+    /** Share of the statement that is calibration, in per cent; blank is 80. */
+    calibration_share?: string;
+    /** `limits`, `ninety_five` or `one_sigma`; none is limits. */
+    coverage?: string;
+    /** When it is due, as `2027-03-01`. */
+    due?: string;
+    /** Its identity within the instrument; none for a new one. */
+    id?: string | null;
+    /** What it is called: "wet bulb". */
+    name?: string;
+    /** Identifier of the quantity that it reads, as `temperature`. */
+    quantity?: string;
+    /** The upper end of its range, in its unit. */
+    range?: string;
+    /** How it reads what it reads: `flow` → `actual` or `standard_1.2`, `wet_bulb` → `measured` or `sea_level`. */
+    reads?: Record<string, string>;
+    /** The step of its display, in its unit. */
+    resolution?: string;
+    /** Seconds until it shows a change. */
+    response?: string;
+    /** Its own serial number. */
+    serial?: string;
+    /** The unit that its accuracy is stated in. */
+    unit?: string;
   };
 
   /** One reading as typed. */
   type TypedReading = {
+    /** Key of the reading to whose time this one is brought, from takes before and after it (A-B-A). */
+    at_time_of?: string | null;
     /** Its ± (95 %), as typed; none or blank is not known. */
     plus_minus?: TypedValue | null;
+    /** The probe that it was read with, as `instrument/probe`; none is the one used last for it, an empty text none at all. */
+    probe?: string | null;
+    /** How the probe was held; none is not said. */
+    spot?: TypedSpot | null;
+    /** Its takes; with any, their mean is the reading, whatever `text` says. */
+    takes?: Array<TypedTake>;
     /** The text, exactly as typed; it may carry a unit of its own. */
     text: string;
     /** The unit beside it; none means the unit chosen for its quantity. */
     unit?: string | null;
+  };
+
+  /** What is asked of a result. */
+  type TypedRequirement = {
+    /** What the readings would have to be for it to hold, by key: the conditions of a rating. Empty: it holds as read. */
+    conditions?: Record<string, TypedValue>;
+    /** `at_least`, `at_most`, `between` or `within` (a nominal figure and a tolerance). */
+    direction: string;
+    /** Key of the result. */
+    figure: string;
+    /** The upper limit, or the tolerance. */
+    other?: TypedValue;
+    /** The ± of the requirement itself, where a maker states one; then it is only said whether the two disagree. */
+    plus_minus?: TypedValue;
+    /** Accepted risk of a wrong "meets", in per cent; blank is 5. */
+    risk?: string;
+    /** Where it comes from: drawing, schedule, specification. */
+    source?: string;
+    /** The limit, the lower one of two, or the nominal figure. */
+    value: TypedValue;
+  };
+
+  /** Several probes held in the same air. */
+  type TypedRun = {
+    /** The probe that the others are held against; none is the mean of all. */
+    against?: string | null;
+    /** Readings of this visit are corrected by what was found. */
+    apply?: boolean;
+    /** Identifier of the quantity, as `temperature`. */
+    quantity: string;
+    /** What each probe showed. */
+    rows?: Array<TypedRunRow>;
+    /** `start` or `end` of the visit. */
+    when: string;
+  };
+
+  /** What one probe showed. */
+  type TypedRunRow = {
+    /** The probe, as `instrument/probe`. */
+    probe: string;
+    /** What it showed. */
+    value: TypedValue;
+  };
+
+  /** How a probe was held. */
+  type TypedSpot = {
+    /** `point`, `grid` or `averaging`. */
+    held: string;
+    /** What the place adds by itself (95 %); blank is not known. */
+    plus_minus?: TypedValue;
+    /** How many points a grid has. */
+    points?: string;
+    /** Standard deviation of the points of a grid; blank is not known. */
+    spread?: TypedValue;
+  };
+
+  /** One take of a reading. */
+  type TypedTake = {
+    /** When, as `2026-12-01T14:05:20Z`; blank is now. */
+    at?: string;
+    /** The text, in the unit of the reading unless it carries one. */
+    text: string;
   };
 
   /** A number with its unit, as typed. */
@@ -911,6 +1337,14 @@ declare namespace Desk {
     rows: Array<UnitsRow>;
   };
 
+  /** A usual figure for what a place adds. */
+  type UsualSpot = {
+    /** "Duct, ± 0.3 K, common practice". */
+    label: string;
+    /** What it would type. */
+    spot: TypedSpot;
+  };
+
   /** A value as shown, with its SI value beside. */
   type ValueView = {
     /** "41.3", with a true minus and no-break spaces. */
@@ -921,6 +1355,30 @@ declare namespace Desk {
     si_unit: string;
     /** "kW"; empty for plain ratios. */
     unit: string;
+  };
+
+  /** One requirement and its answer. */
+  type VerdictView = {
+    /** `meets`, `falls_short`, `goes_over`, `cannot_be_told`, or none where it cannot be held against it yet. */
+    answer?: string | null;
+    /** "Total at least 48.0 kW, by schedule M-601". */
+    asked: string;
+    /** "94 % likely to be met". */
+    chance?: string | null;
+    /** What would decide, where it cannot be told: one sentence each. */
+    decides: Array<string>;
+    /** What is wrong with the requirement as typed: `value`, `other`, `risk`, `conditions.entering.dry_bulb`. */
+    errors: Array<FieldError>;
+    /** Which one of those typed. */
+    index: number;
+    /** "50.2 ± 2.8 kW is above it by 2.2 kW; 2.4 kW would be needed." */
+    says?: string | null;
+    /** A share of the design figure, or why none is given. */
+    share?: string | null;
+    /** Why there is no answer: the ± is not known, draws are still running, the conditions differ. */
+    why_not?: Message | null;
+    /** "Meets", "Falls short", "Goes over", "Cannot be told". */
+    word?: string | null;
   };
 
   /** A book figure beside the measured one. */
@@ -999,6 +1457,8 @@ declare namespace Desk {
     rows: Array<ResultRow>;
     /** How the equipment was running. */
     running: string;
+    /** Probes run side by side: index, title, and what was found. */
+    runs: Array<OptionView>;
     /** Its site's name. */
     site: string;
     /** "14 July 2026, 14:05". */

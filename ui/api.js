@@ -36,14 +36,14 @@ function takeToken() {
  * Asks the desk.
  * @template {Desk.Reply['reply']} Kind
  * @param {Desk.Request} request
- * @param {Kind} kind the kind of reply that this request has
+ * @param {...Kind} kinds the kinds of reply that this request has
  * @returns {Promise<Extract<Desk.Reply, { reply: Kind }>>}
  * @throws {Fault}
  */
-export async function ask(request, kind) {
+export async function ask(request, ...kinds) {
   const answer = JSON.parse(await send(JSON.stringify(request)));
   if (answer.fault) throw new Fault(answer.fault);
-  if (answer.ok?.reply !== kind) {
+  if (!kinds.includes(answer.ok?.reply)) {
     throw new Fault({
       code: 'bad_request',
       message: 'The app got an answer to another question. Close it and open it again.',

@@ -15,6 +15,9 @@ import { Entry } from './screens/entry.js';
 import { Equipment } from './screens/equipment.js';
 import { EquipmentEdit } from './screens/equipment-edit.js';
 import { Home } from './screens/home.js';
+import { Instrument } from './screens/instrument.js';
+import { Instruments } from './screens/instruments.js';
+import { Run } from './screens/run.js';
 import { Site } from './screens/site.js';
 import { SiteEdit } from './screens/site-edit.js';
 import { Sites } from './screens/sites.js';
@@ -32,6 +35,9 @@ const screens = {
   equipment: Equipment,
   entry: Entry,
   home: Home,
+  instrument: Instrument,
+  instruments: Instruments,
+  run: Run,
   'site-edit': SiteEdit,
   site: Site,
   sites: Sites,
@@ -95,6 +101,7 @@ function markRail(chosen) {
 function fillRail() {
   const rows = [
     ...tabs,
+    { name: 'instruments', label: 'Instruments', href: '#/instruments', icon: /** @type {const} */ ('instruments') },
     { name: 'appearance', label: 'Appearance', href: '#/appearance', icon: /** @type {const} */ ('appearance') },
     { name: 'about', label: 'About', href: '#/about', icon: /** @type {const} */ ('about') },
   ];

@@ -8,6 +8,7 @@ const paths = {
   checks: ['M4 6h3 M4 12h3 M4 18h3 M10 6h10 M10 12h10 M10 18h10', '=M4 6h3'],
   sites: ['M2 21h20 M5 21V7l7-4v18 M12 10h7v11 M8 9v2 M8 14v2'],
   units: ['M3 8h18v8H3z M7 8v4 M11 8v3 M15 8v4 M19 8v3'],
+  instruments: ['M10 3h4v11a4 4 0 1 1-4 0z M14 6h4 M14 10h3', 'o12 17.5 1.6'],
   appearance: ['M12 4a8 8 0 1 0 0 16z M12 4a8 8 0 0 1 0 16'],
   about: ['M6 2h9l4 4v16H6z M12.5 10.5v7', 'o12.5 7 1.4'],
   back: ['M15 4l-8 8 8 8'],

@@ -19,7 +19,12 @@ const routes = [
   ['equipment-edit', 'equipment/:equipment/edit'],
   ['visit', 'visit/:visit'],
   ['visit-edit', 'visit/:visit/edit'],
+  ['run', 'visit/:visit/run/new'],
+  ['run', 'visit/:visit/run/:run'],
   ['entry', 'entry/:entry'],
+  ['instruments', 'instruments'],
+  ['instrument', 'instruments/new'],
+  ['instrument', 'instrument/:instrument'],
   ['units', 'units'],
   ['appearance', 'appearance'],
   ['about', 'about'],
@@ -97,8 +102,11 @@ export function tabOf(route) {
     case 'equipment-edit':
     case 'visit':
     case 'visit-edit':
+    case 'run':
     case 'entry':
       return 'sites';
+    case 'instrument':
+      return 'instruments';
     default:
       return route.name;
   }

@@ -115,7 +115,7 @@ export function differs(typed, first) {
 
 /** @param {Desk.Typed} typed */
 function sorted(typed) {
-  return [entries(typed.choices), entries(typed.readings), typed.accepted ?? []];
+  return [entries(typed.choices), entries(typed.readings), typed.accepted ?? [], typed.requirements ?? []];
 }
 
 /** @param {Record<string, unknown> | undefined} map */

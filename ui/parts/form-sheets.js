@@ -1,7 +1,7 @@
 // The sheets of a form's fields: which property, which unit, which ±.
 
 import { h, svg } from '../lib/dom.js';
-import { button, go } from '../lib/screen.js';
+import { go } from '../lib/screen.js';
 import { openSheet } from '../lib/sheet.js';
 
 /** @typedef {import('./form.js').Form} Form */
@@ -83,90 +83,6 @@ export async function unitSheet(form, view) {
   ]);
   if (unit === all) go('#/units');
   else if (unit !== undefined) form.unit(view.key, unit);
-}
-
-/**
- * @param {Form} form
- * @param {Desk.ReadingView} view
- */
-export async function plusMinusSheet(form, view) {
-  let text = view.plus_minus_text;
-  let unit = view.plus_minus_unit;
-  const alike = form
-    .readings()
-    .filter((other) => other.key !== view.key && other.plus_minus_text.trim() === '' && sameUnits(other, view))
-    .map((other) => other.key);
-  const keys = await openSheet(`± of ${lowerFirst(view.label)}`, (sheet) => [
-    h(
-      'p',
-      { class: 'mute' },
-      'How far the reading may be off: 95 times in 100 the true value lies within it. Leave it blank where it is not known.',
-    ),
-    h(
-      'div',
-      { class: 'entry' },
-      h('input', {
-        type: 'text',
-        inputmode: 'decimal',
-        enterkeyhint: 'done',
-        autocomplete: 'off',
-        'aria-label': `± of ${view.name}`,
-        value: text,
-        oninput: (/** @type {Event} */ event) => {
-          text = /** @type {HTMLInputElement} */ (event.target).value;
-        },
-        onkeydown: (/** @type {KeyboardEvent} */ event) => {
-          if (event.key !== 'Enter') return;
-          event.preventDefault();
-          sheet.close([view.key]);
-        },
-      }),
-      h('span', { class: 'unit' }, unit.symbol),
-    ),
-    view.plus_minus_units.length > 1 &&
-      h(
-        'div',
-        { class: 'chips gap', role: 'group', 'aria-label': 'Unit of the ±' },
-        view.plus_minus_units.map((one) =>
-          h(
-            'button',
-            {
-              type: 'button',
-              class: one.id === unit.id ? 'chip on' : 'chip',
-              'aria-pressed': String(one.id === unit.id),
-              onclick: () => {
-                unit = one;
-                sheet.redraw();
-              },
-            },
-            one.symbol,
-          ),
-        ),
-      ),
-    h(
-      'div',
-      { class: 'stack gap' },
-      button('Set ±', () => sheet.close([view.key]), { kind: 'go' }),
-      alike.length > 0 &&
-        button(
-          `Set it, and for ${alike.length === 1 ? 'the other reading' : `the ${alike.length} other readings`} in ${view.unit.symbol} without one`,
-          () => sheet.close([view.key, ...alike]),
-        ),
-    ),
-  ]);
-  if (keys) form.plusMinus(keys, text, unit.id);
-}
-
-/**
- * Whether two readings can be typed in the same units, so that one instrument may have read both.
- * @param {Desk.ReadingView} one
- * @param {Desk.ReadingView} other
- */
-function sameUnits(one, other) {
-  return (
-    one.unit.id === other.unit.id &&
-    one.units.map((unit) => unit.id).join() === other.units.map((unit) => unit.id).join()
-  );
 }
 
 /** @param {string} text */

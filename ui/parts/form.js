@@ -7,8 +7,9 @@ import { say } from '../lib/say.js';
 import { link } from '../lib/screen.js';
 import { acted, changeSign, choose, typePlusMinus, typeText } from '../lib/typed.js';
 import { toNext, whenReleased } from '../lib/typing.js';
-import { choiceSheet, plusMinusSheet, unitSheet } from './form-sheets.js';
+import { choiceSheet, unitSheet } from './form-sheets.js';
 import { noteView } from './note.js';
+import { readingSheet } from './reading-sheet.js';
 
 /** @typedef {Desk.ReadingView & { field: 'reading' }} Reading */
 /** @typedef {Desk.ChoiceView & { field: 'choice' }} Choice */
@@ -29,6 +30,8 @@ export class Form {
   #open = new Map();
   #changed;
   #redraw;
+  /** @type {(() => void) | null} */
+  #watcher = null;
 
   /**
    * @param {Desk.Typed} typed
@@ -49,6 +52,23 @@ export class Form {
   see(sections, notes) {
     this.sections = sections;
     this.notes = notes;
+    this.#watcher?.();
+  }
+
+  /**
+   * Called whenever the desk has said something new: a sheet over the form is drawn anew. None ends it.
+   * @param {(() => void) | null} watcher
+   */
+  watch(watcher) {
+    this.#watcher = watcher;
+  }
+
+  /**
+   * What a sheet said of a reading, or asked of a result.
+   * @param {Desk.Typed} typed
+   */
+  put(typed) {
+    this.#put(typed, true);
   }
 
   /** Decides what may be complained about now: while one types, only what was there already. */
@@ -258,7 +278,8 @@ export class Form {
    */
   #reading(view, last) {
     const id = elementId('field', view.key);
-    const text = this.text(view);
+    const mean = view.with?.takes.mean ?? null;
+    const text = mean ?? this.text(view);
     const error = view.error && this.#shown.has(`error ${view.key}`) ? view.error : null;
     const notes = this.#notesOn(view);
     const odd = view.unusual && notes.some((note) => note.tone === 'unusual' && !note.accepted);
@@ -269,6 +290,12 @@ export class Form {
       text.trim() === '' && view.assumed && { id: `${id}-assumed`, says: view.assumed },
       wasBelow && { id: `${id}-was`, says: `was ${wasFigure(view)}` },
       view.read_as && { id: `${id}-read`, says: view.read_as },
+      view.with?.takes.says && {
+        id: `${id}-takes`,
+        says: [view.with.takes.word, view.with.takes.says].filter(Boolean).join('. '),
+      },
+      view.with?.corrected && { id: `${id}-corrected`, says: view.with.corrected },
+      view.with?.probe && text !== '' && { id: `${id}-probe`, says: view.with.label },
     ].filter((one) => one !== null && one !== undefined && one !== false && one !== '');
     const describes = [
       ...asides.map((one) => one.id),
@@ -290,7 +317,7 @@ export class Form {
             class: 'meter',
             id: `${id}-pm`,
             'aria-haspopup': 'dialog',
-            onclick: () => plusMinusSheet(this, view),
+            onclick: () => readingSheet(this, view),
           },
           h('u', null, view.plus_minus || 'add a ±'),
           h('span', { class: 'sr' }, `, ± of ${view.label}, change`),
@@ -321,6 +348,7 @@ export class Form {
           'aria-label': view.name,
           'aria-describedby': describes.join(' '),
           'aria-invalid': error && text !== '' ? 'true' : null,
+          readonly: mean !== null,
           value: text,
           oninput: (/** @type {Event} */ event) =>
             this.type(view, /** @type {HTMLInputElement} */ (event.target).value),

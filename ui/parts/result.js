@@ -4,6 +4,7 @@
 import { h, svg } from '../lib/dom.js';
 import { icon, mark } from '../lib/icons.js';
 import { noteView } from './note.js';
+import { requirementsView } from './requirements.js';
 
 /** Shown where there is no value. */
 export const dash = '–';
@@ -131,9 +132,13 @@ function percent(share) {
 /**
  * The results below the headline.
  * @param {Desk.Solved} solved
- * @param {{ notes: Desk.NoteView[], act?: (act: Desk.Act) => void }} how the notes that stand here
+ * @param {object} how
+ * @param {Desk.NoteView[]} how.notes the notes that stand here
+ * @param {(act: Desk.Act) => void} [how.act]
+ * @param {Desk.TypedRequirement[]} [how.requirements] as typed
+ * @param {import('./requirements.js').Put | null} [how.ask] none where nothing can be changed any more
  */
-export function results(solved, { notes, act }) {
+export function results(solved, { notes, act, requirements = [], ask = null }) {
   return [
     notes.length > 0 &&
       h(
@@ -142,6 +147,7 @@ export function results(solved, { notes, act }) {
         head('notes-title', 'Notes'),
         notes.map((note) => noteView({ ...note, id: `note-${note.code.replace(/[^a-zA-Z0-9_]+/g, '-')}`, act })),
       ),
+    requirementsView(solved.requirements, requirements, ask),
     solved.groups.filter((group) => group.rows.length > 0).map(groupView),
     solved.versus.length > 0 &&
       h(

@@ -4,9 +4,10 @@ import { ask, Fault } from '../api.js';
 import { h } from '../lib/dom.js';
 import { rememberFiled } from '../lib/filed.js';
 import { icon } from '../lib/icons.js';
-import { Keeper } from '../lib/keeper.js';
+import { Keeper, quietMs } from '../lib/keeper.js';
 import { Latest } from '../lib/latest.js';
 import { notice } from '../lib/notice.js';
+import { asked, unasked } from '../lib/reading.js';
 import { address, placeOf } from '../lib/route.js';
 import { say, sayInQuiet } from '../lib/say.js';
 import { button, go, goBack, goInstead, Screen } from '../lib/screen.js';
@@ -42,9 +43,25 @@ export class Check extends Screen {
   );
   #solver = new Latest(
     (/** @type {Kept} */ { typed, place }) => ask({ ask: 'solve', check: this.#check(), typed, place }, 'solved'),
-    (solved) => this.#take(solved),
+    (solved) => {
+      this.#restless = false;
+      this.#take(solved);
+    },
     (error) => this.#say(error),
   );
+  #drawer = new Latest(
+    (/** @type {Kept} */ { typed, place }) =>
+      ask({ ask: 'draw', check: this.#check(), typed, place }, 'solved', 'overtaken'),
+    (solved) => {
+      // A newer form is on its way: what was drawn for the old one is of no use.
+      if (solved.reply === 'solved' && !this.#restless) this.#take(solved);
+    },
+    (error) => this.#say(error),
+  );
+  /** Waits for a pause in typing before draws are asked for. */
+  #pause = 0;
+  /** What is typed has changed and is not worked out yet. */
+  #restless = false;
   #keeper = new Keeper((/** @type {Kept} */ kept) => this.#keep(kept));
 
   async load() {
@@ -56,6 +73,7 @@ export class Check extends Screen {
     this.#form.typed = opened.typed;
     this.#solved = opened.solved;
     this.#form.see(opened.solved.sections, opened.solved.notes);
+    this.#drawLater();
   }
 
   #open() {
@@ -76,6 +94,8 @@ export class Check extends Screen {
 
   async leave() {
     this.#solver.stop();
+    this.#drawer.stop();
+    clearTimeout(this.#pause);
     await this.#keeper.flush();
   }
 
@@ -88,6 +108,8 @@ export class Check extends Screen {
     this.#refused = null;
     this.render();
     const now = { typed: this.#form.typed, place: this.#place };
+    this.#restless = true;
+    clearTimeout(this.#pause);
     this.#solver.ask(now);
     if (this.#draft || differs(now.typed, this.#first)) this.#keeper.touch(now);
   }
@@ -97,7 +119,16 @@ export class Check extends Screen {
     this.#solved = solved;
     this.#form.see(solved.sections, solved.notes);
     this.render();
+    this.#drawLater();
     sayInQuiet(spoken(solved));
+  }
+
+  /** Draws are made when typing rests; until then a result that wants them stands without a ±. */
+  #drawLater() {
+    clearTimeout(this.#pause);
+    if (!this.#solved?.wants_draws) return;
+    const now = { typed: this.#form.typed, place: this.#place };
+    this.#pause = window.setTimeout(() => this.#drawer.ask(now), quietMs);
   }
 
   /** @param {Kept} kept */
@@ -263,7 +294,12 @@ export class Check extends Screen {
             h(
               'div',
               { class: 'results', key: 'results' },
-              results(solved, { notes: form.notesApart(), act: (act) => form.act(act) }),
+              results(solved, {
+                notes: form.notesApart(),
+                act: (act) => form.act(act),
+                requirements: form.typed.requirements ?? [],
+                ask: (requirement, index) => form.put(requirementsPut(form.typed, requirement, index)),
+              }),
             ),
             h(
               'div',
@@ -291,6 +327,15 @@ export class Check extends Screen {
     notice({ says: this.#kept ? `Draft kept ${this.#kept}` : 'Draft kept' });
     goBack('#/');
   }
+}
+
+/**
+ * @param {Desk.Typed} typed
+ * @param {Desk.TypedRequirement | null} requirement none takes the one at `index` off
+ * @param {number | null} index
+ */
+function requirementsPut(typed, requirement, index) {
+  return requirement ? asked(typed, requirement, index) : unasked(typed, index ?? -1);
 }
 
 /** @param {string} draft */

@@ -138,7 +138,7 @@ export class Entry extends Screen {
                   h(
                     'tr',
                     { class: 'fig' },
-                    h('th', { scope: 'row' }, row.label),
+                    h('th', { scope: 'row' }, row.label, row.with && h('small', null, row.with)),
                     h('td', { class: 'n as-typed' }, row.text),
                     h('td', { class: 'pm as-typed' }, row.plus_minus),
                   ),

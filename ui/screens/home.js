@@ -94,6 +94,7 @@ export class Home extends Screen {
           h(
             'div',
             { class: 'sec only-phone' },
+            linkRow({ href: '#/instruments', title: 'Instruments', says: 'Probes, accuracy, calibration dates' }),
             linkRow({ href: '#/appearance', title: 'Appearance', says: 'Light, dark, high contrast' }),
             linkRow({ href: '#/about', title: 'About Dewledger', says: 'Limits, cautions, where the ledger is' }),
           ),

@@ -6,7 +6,7 @@ import { icon } from '../lib/icons.js';
 import { address } from '../lib/route.js';
 import { linkButton, Screen } from '../lib/screen.js';
 import { figures } from '../parts/result.js';
-import { entryRow, linkRow, listSection } from '../parts/rows.js';
+import { entryRow, linkRow, listSection, textLink } from '../parts/rows.js';
 
 export class Visit extends Screen {
   /** @type {Desk.VisitView | null} */
@@ -61,6 +61,23 @@ export class Visit extends Screen {
         h(
           'div',
           null,
+          listSection('Probes side by side', [
+            one.runs.map((run) =>
+              linkRow({
+                key: run.value,
+                href: address(['visit', visit ?? '', 'run', run.value]),
+                title: run.label,
+                says: run.help ?? '',
+              }),
+            ),
+            one.runs.length === 0 &&
+              h(
+                'p',
+                { class: 'mute' },
+                'Held in the same air at the start and the end, probes show how far they differ.',
+              ),
+            h('p', null, textLink('Run probes side by side', address(['visit', visit ?? '', 'run', 'new']), 'plus')),
+          ]),
           listSection(
             'Entries',
             one.entries.length > 0

@@ -189,6 +189,7 @@ fn takes(
     }
     TakesView {
         rows,
+        mean: with.mean_si.map(|si| show(Amount::new(item.kind, si), unit).number),
         says,
         steadiness: steadiness.map(|(id, _)| id.to_owned()),
         word: steadiness.map(|(_, word)| word.to_owned()),

@@ -54,6 +54,8 @@ pub struct PartView {
 pub struct TakesView {
     /// In the order they were made.
     pub rows: Vec<TakeRow>,
+    /// "13.20", what stands in the field; none without takes.
+    pub mean: Option<String>,
     /// "Mean of 4 takes in 60 s: 13.20 °C, scatter 0.08 K"; none without takes.
     pub says: Option<String>,
     /// `steady`, `drifting`, `hunting` or `not_judged`; none without takes.
