@@ -65,7 +65,6 @@ export class Instruments extends Screen {
       ),
       out.length > 0 && listSection('Out of use', out.map(row)),
       used.length > 1 && h('p', { class: 'ask' }, 'Probes are held side by side from the screen of a visit.'),
-      h('p', { class: 'gap' }, linkButton('Start a check', '#/checks', { icon: 'checks', kind: 'left' })),
     );
   }
 }

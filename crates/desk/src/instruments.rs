@@ -9,7 +9,7 @@ use crate::classes::{self, CLASSES};
 use crate::clock;
 use crate::desk::{Asked, VERSION};
 use crate::form_view::unit_view;
-use crate::places::{body, json};
+use crate::places::{body, capital, json};
 use crate::probe::{self, ReadProbe, read_probe};
 use crate::reply::{
     ChoiceView, Fault, FieldError, InstrumentForm, InstrumentRow, InstrumentsView, OptionView,
@@ -149,7 +149,10 @@ pub(crate) fn form(
         typed,
         errors,
         withdrawn: head.is_some_and(|head| head.withdrawn),
-        quantities: READABLE.iter().map(|kind| option(kind.id(), kind.label(), "")).collect(),
+        quantities: READABLE
+            .iter()
+            .map(|kind| option(kind.id(), &capital(kind.label()), ""))
+            .collect(),
         coverages: vec![
             option("limits", "Limits", "Never outside: what is taken where the paper does not say"),
             option("ninety_five", "95 %", "In 95 of 100 cases inside, as a certificate with k = 2"),

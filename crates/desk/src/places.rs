@@ -269,7 +269,7 @@ fn equipment_row(at: &Asked<'_>, head: &Head) -> Result<EquipmentRow, Fault> {
     Ok(EquipmentRow { equipment: head.record.to_string(), tag: head.body.title.clone(), says })
 }
 
-fn capital(text: &str) -> String {
+pub(crate) fn capital(text: &str) -> String {
     let mut characters = text.chars();
     characters
         .next()

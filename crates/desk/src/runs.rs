@@ -14,7 +14,7 @@ use crate::bench::{Bench, Correction, KnownProbe};
 use crate::clock;
 use crate::desk::{Asked, VERSION};
 use crate::form_view::unit_view;
-use crate::places::{body, json, visit_id};
+use crate::places::{body, capital, json, visit_id};
 use crate::reply::{Fault, OptionView, Reply, RunRow, RunView};
 use crate::request::{Place, TypedRun, TypedRunRow};
 use crate::visits::{self, VisitBody};
@@ -182,11 +182,7 @@ pub(crate) fn rows(at: &Asked<'_>, known: &VisitBody) -> Vec<OptionView> {
 }
 
 fn title(at: &Asked<'_>, typed: &TypedRun, at_ms: Option<i64>) -> String {
-    let kind = Kind::from_id(&typed.quantity).map_or("", Kind::label);
-    let mut title = kind.to_owned();
-    if let Some(first) = title.get_mut(0..1) {
-        first.make_ascii_uppercase();
-    }
+    let mut title = capital(Kind::from_id(&typed.quantity).map_or("", Kind::label));
     title.push_str(if typed.when == "end" { ", at the end" } else { ", at the start" });
     if let Some(ms) = at_ms {
         let when = dewledger_ledger::At { ms, ..at.now };
@@ -253,7 +249,7 @@ fn view(
         let many = bench.probes.iter().filter(|other| other.kind == probe.kind).count() > 1;
         let id = probe.kind.id();
         if many && !quantities.iter().any(|option| option.value == id) {
-            let label = probe.kind.label().to_owned();
+            let label = capital(probe.kind.label());
             quantities.push(OptionView { value: id.to_owned(), label, help: None });
         }
     }
