@@ -3,7 +3,7 @@
 import { ask } from '../api.js';
 import { h } from '../lib/dom.js';
 import { address } from '../lib/route.js';
-import { button, go, linkButton, Screen } from '../lib/screen.js';
+import { button, go, Screen } from '../lib/screen.js';
 import { openSheet } from '../lib/sheet.js';
 import { radioRow } from '../parts/form-sheets.js';
 import { linkRow, listSection } from '../parts/rows.js';
