@@ -14,12 +14,14 @@ use std::collections::BTreeMap;
 
 pub use combine::{Combined, combine, quantile};
 pub use draws::{DRAWS, Drawn, Interval, SEED, draw};
+pub use first_order::terms;
 pub use term::Term;
 
 use crate::check::Check;
 use crate::given::Given;
 use crate::outcome::{Note, Outcome};
 use crate::refusal::Stop;
+use crate::slips;
 
 /// Half-width of a 95 % interval over the standard uncertainty of a normal distribution.
 pub const COVERAGE_95: f64 = 1.959_963_984_540_054;
@@ -66,7 +68,11 @@ pub struct Worked {
 ///
 /// As [`Check::solve`].
 pub fn work_out(check: &dyn Check, given: &Given) -> Result<Worked, Stop> {
-    let first = check.solve(given)?;
+    let mut first = check.solve(given);
+    if first.is_err() {
+        slips::offer(check, given, &mut first);
+    }
+    let first = first?;
     let doubts = first_order::doubts(check, given, &first);
     // With the doubt known, a difference counts as resolved by that doubt instead of the floor for unstated ±.
     let mut informed = given.clone();
@@ -75,7 +81,9 @@ pub fn work_out(check: &dyn Check, given: &Given) -> Result<Worked, Stop> {
             informed.set_floor(key, 2.0 * doubt.u_si);
         }
     }
-    let mut outcome = check.solve(&informed)?;
+    let mut result = check.solve(&informed);
+    slips::offer(check, &informed, &mut result);
+    let mut outcome = result?;
     let notes: Vec<Note> = check.judge(&informed, &outcome, &doubts);
     outcome.notes.extend(notes);
     outcome.notes.sort_by_key(|note| note.weight);

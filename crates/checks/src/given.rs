@@ -4,6 +4,7 @@ use std::collections::BTreeMap;
 
 use dewledger_quantities::{Amount, Quantity, Unit};
 
+use crate::outcome::Change;
 use crate::part::{Part, half_width};
 
 /// One reading, read from what was typed.
@@ -133,6 +134,64 @@ impl Given {
     /// Sets the floor of a difference from its known doubt.
     pub(crate) fn set_floor(&mut self, difference: &str, floor_si: f64) {
         self.floors.insert(difference.to_owned(), floor_si);
+    }
+
+    /// The same after the changes of an offer, in order.
+    #[must_use]
+    pub fn changed(&self, changes: &[Change]) -> Self {
+        let mut other = self.clone();
+        for change in changes {
+            match change {
+                Change::Choose(key, value) => other.choose(key.as_ref(), value.as_ref()),
+                Change::Unit(key, unit) => other.typed_in(key, unit),
+                Change::Swap(one, two) => {
+                    let (first, second) = (other.take(one), other.take(two));
+                    other.place(two, first);
+                    other.place(one, second);
+                }
+                Change::Move(from, to) => {
+                    let moved = other.take(from);
+                    other.place(to, moved);
+                }
+                Change::Clear(key) => {
+                    other.take(key);
+                }
+            }
+        }
+        other
+    }
+
+    /// The number of a reading as it was typed, taken for another unit.
+    fn typed_in(&mut self, key: &str, unit: &str) {
+        let Some(reading) = self.readings.get_mut(key) else { return };
+        let kind = reading.amount.kind();
+        let number = reading.unit.and_then(|typed| typed.from_si(kind, reading.amount.si()));
+        let Some((meant, number)) = Unit::find(unit).zip(number) else { return };
+        let (Some(si), Some(before), Some(after)) = (
+            meant.to_si(kind, number),
+            reading.unit.and_then(|unit| unit.width_from_si(kind, 1.0)),
+            meant.width_from_si(kind, 1.0),
+        ) else {
+            return;
+        };
+        // A ± was typed in steps of the same unit.
+        reading.half_width_si = reading.half_width_si.map(|width| width * before / after);
+        reading.amount = Amount::new(kind, si);
+        reading.unit = Some(meant);
+        self.parts.remove(key);
+    }
+
+    fn take(&mut self, key: &str) -> Option<(Reading, Option<Vec<Part>>)> {
+        let reading = self.readings.remove(key)?;
+        Some((reading, self.parts.remove(key)))
+    }
+
+    fn place(&mut self, key: &str, what: Option<(Reading, Option<Vec<Part>>)>) {
+        let Some((reading, parts)) = what else { return };
+        self.readings.insert(key.to_owned(), reading);
+        if let Some(parts) = parts {
+            self.parts.insert(key.to_owned(), parts);
+        }
     }
 
     /// From now on it is drawn around the readings: air beyond saturation by however much counts as saturated.

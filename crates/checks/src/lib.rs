@@ -12,6 +12,7 @@ pub mod doubt;
 pub mod drawn;
 pub mod form;
 pub mod part;
+pub mod slips;
 pub mod statement;
 pub mod takes;
 pub mod verdict;

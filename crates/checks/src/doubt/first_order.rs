@@ -25,7 +25,8 @@ fn names(check: &dyn Check, given: &Given) -> BTreeMap<String, (String, bool)> {
 }
 
 /// Every source of doubt of what is given.
-pub(super) fn terms(check: &dyn Check, given: &Given) -> Vec<Term> {
+#[must_use]
+pub fn terms(check: &dyn Check, given: &Given) -> Vec<Term> {
     let mut terms = check.terms(given);
     terms.extend(term::of_readings(given, &names(check, given)));
     terms
@@ -70,9 +71,7 @@ pub(super) fn doubts(
         }
     }
     let mut parts: BTreeMap<String, Vec<(f64, f64)>> = BTreeMap::new();
-    let mut all = check.terms(given);
-    all.extend(term::of_readings(given, &names));
-    for term in &all {
+    for term in &terms(check, given) {
         for (figure, effect) in effects(check, given, outcome, term) {
             if let Some(doubt) = doubts.get_mut(&figure) {
                 doubt.shares.push((term.source.clone(), effect.by * effect.by));

@@ -1,0 +1,129 @@
+//! An ordinary visit for each check, with ordinary instruments: every reading carries a ±, some of it shared by the
+//! readings of one probe ("of dry"), some of it scatter ("in 5 takes").
+
+use dewledger_checks::part::{Part, Source};
+use dewledger_checks::{Given, Reading};
+use dewledger_quantities::{Kind, PlusMinus, Unit, read, read_plus_minus};
+
+/// Choices, and readings as a person types them: key, quantity, number with its unit, ±.
+struct Example {
+    choices: &'static [(&'static str, &'static str)],
+    readings: &'static [(&'static str, Kind, &'static str, &'static str)],
+}
+
+const T: Kind = Kind::Temperature;
+
+fn example(id: &str) -> Option<Example> {
+    Some(match id {
+        "air_state" => Example {
+            choices: &[("pressure.by", "read")],
+            readings: &[
+                ("pressure.read", Kind::Pressure, "83.4 kPa", "0.2 kPa"),
+                ("air.dry_bulb", T, "24.1 C", "0.3 K"),
+                ("air.wet_bulb", T, "15.6 C", "0.3 K"),
+            ],
+        },
+        "air_heat" => Example {
+            choices: &[
+                ("pressure.by", "elevation"),
+                ("flow.basis", "actual_leaving"),
+                ("water.state", "condensate"),
+            ],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "1609 m", ""),
+                ("entering.dry_bulb", T, "26.7 C", "0.25 K of dry"),
+                ("entering.wet_bulb", T, "17.9 C", "0.25 K of wet"),
+                ("leaving.dry_bulb", T, "12.8 C", "0.25 K of dry"),
+                ("leaving.wet_bulb", T, "11.6 C", "0.25 K of wet in 5 takes"),
+                ("flow.rate", Kind::AirFlow, "2360 L/s", "4 %"),
+            ],
+        },
+        "book_constants" => Example {
+            choices: &[("pressure.by", "elevation"), ("flow.basis", "actual_leaving")],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "1609 m", ""),
+                ("entering.dry_bulb", T, "26.7 C", "0.2 K"),
+                ("entering.wet_bulb", T, "17.9 C", "0.2 K"),
+                ("leaving.dry_bulb", T, "12.8 C", "0.2 K"),
+                ("leaving.wet_bulb", T, "11.6 C", "0.2 K"),
+                ("flow.rate", Kind::AirFlow, "2360 L/s", "4 %"),
+            ],
+        },
+        "mixing" => Example {
+            choices: &[
+                ("pressure.by", "read"),
+                ("stream1_flow.basis", "actual"),
+                ("stream2_flow.basis", "actual"),
+            ],
+            readings: &[
+                ("pressure.read", Kind::Pressure, "100.8 kPa", "0.2 kPa"),
+                ("stream1.dry_bulb", T, "24.4 C", "0.2 K"),
+                ("stream1.wet_bulb", T, "16.5 C", "0.2 K"),
+                ("stream1_flow.rate", Kind::AirFlow, "1890 L/s", "4 %"),
+                ("stream2.dry_bulb", T, "33.0 C", "0.2 K"),
+                ("stream2.wet_bulb", T, "24.0 C", "0.2 K"),
+                ("stream2_flow.rate", Kind::AirFlow, "520 L/s", "5 %"),
+            ],
+        },
+        "condensate" => Example {
+            choices: &[("pressure.by", "read"), ("flow.basis", "actual_leaving"), ("fills", "2")],
+            readings: &[
+                ("pressure.read", Kind::Pressure, "100.8 kPa", "0.2 kPa"),
+                ("entering.dry_bulb", T, "26.4 C", "0.1 K"),
+                ("entering.wet_bulb", T, "20.1 C", "0.1 K"),
+                ("leaving.dry_bulb", T, "12.6 C", "0.1 K"),
+                ("leaving.wet_bulb", T, "11.8 C", "0.1 K"),
+                ("flow.rate", Kind::AirFlow, "2360 L/s", "4 %"),
+                ("fill1.volume", Kind::WaterVolume, "10 L", "0.1 L"),
+                ("fill1.time", Kind::Duration, "1200 s", "3 s"),
+                ("fill2.volume", Kind::WaterVolume, "10 L", "0.1 L"),
+                ("fill2.time", Kind::Duration, "1204 s", "3 s"),
+            ],
+        },
+        _ => return None,
+    })
+}
+
+/// The example of a check, read as the app would read it.
+pub(crate) fn of(id: &str) -> Option<Given> {
+    let example = example(id)?;
+    let mut given = Given::default();
+    for (key, value) in example.choices {
+        given.choose(*key, *value);
+    }
+    for (key, kind, text, said) in example.readings {
+        let (said, takes) = said.split_once(" in ").unwrap_or((said, ""));
+        let (plus_minus, probe) = said.split_once(" of ").unwrap_or((said, ""));
+        let unit = Unit::of(*kind).next().expect("every kind has a unit");
+        let dewledger_quantities::Entry::Read(number) =
+            read(*kind, text, unit).unwrap_or_else(|error| panic!("{key}: {error}"))
+        else {
+            panic!("{key} is blank")
+        };
+        let half_width_si = match read_plus_minus(*kind, plus_minus, number.unit)
+            .unwrap_or_else(|error| panic!("{key}: {error}"))
+        {
+            None => None,
+            Some(PlusMinus::Absolute(width)) => Some(width),
+            Some(PlusMinus::Relative(share)) => Some(share * number.amount.si().abs()),
+        };
+        let reading = Reading { unit: Some(number.unit), half_width_si, amount: number.amount };
+        given.put(*key, reading);
+        if let Some(half_width) = half_width_si.filter(|_| !probe.is_empty()) {
+            given.doubt_by(key, parts(half_width / 1.96, probe, !takes.is_empty()));
+        }
+    }
+    Some(given)
+}
+
+/// A probe's statement, four fifths of it calibration, and the scatter of five takes.
+fn parts(u: f64, probe: &str, takes: bool) -> Vec<Part> {
+    let mut parts = vec![
+        Part::certain(Source::Own, u * 0.2_f64.sqrt()),
+        Part::certain(Source::shared(probe, probe), u * 0.8_f64.sqrt()),
+    ];
+    if takes {
+        parts.push(Part { source: Source::Scatter, u_si: 0.5 * u, freedom: 4.0 });
+    }
+    parts
+}
