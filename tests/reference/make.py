@@ -3,38 +3,8 @@
 import json
 import sys
 
-from CoolProp.CoolProp import HAPropsSI as air
-from CoolProp.CoolProp import PropsSI as fluid
-
-EPSILON = 0.621945
-
-
-def kelvin(celsius):
-    return celsius + 273.15
-
-
-def state(t, by, value, p):
-    """A state from a dry bulb in °C and one humidity; all in SI."""
-    name = {"relative_humidity": "R", "wet_bulb": "B", "dew_point": "D", "humidity_ratio": "W"}[by]
-    given = kelvin(value) if name in "BD" else value
-    args = ("T", kelvin(t), name, given, "P", p)
-    w = air("W", *args)
-    return {"t": kelvin(t), "w": w, "h": air("H", *args), "v": air("V", *args), "p": p, "args": args}
-
-
-def h_at(t, w, p):
-    return air("H", "T", t, "W", w, "P", p)
-
-
-def readings(prefix, t, by, value):
-    kinds = {"relative_humidity": "1", "wet_bulb": "degC", "dew_point": "degC", "humidity_ratio": "kg/kg"}
-    return {f"{prefix}.dry_bulb": [t, "degC"], f"{prefix}.{by}": [value, kinds[by]]}, {f"{prefix}.humidity_by": by}
-
-
-def case(check, title, choices, given, p, results):
-    choices = {"pressure.by": "read", **choices}
-    given = {"pressure.read": [p, "Pa"], **given}
-    return {"check": check, "title": title, "choices": choices, "readings": given, "results": results}
+import surface
+from common import air, case, fluid, h_at, kelvin, readings, state
 
 
 def air_state(title, t, by, value, p):
@@ -151,6 +121,9 @@ CASES = [
     mixing("four streams", [(22.0, "relative_humidity", 0.4, 1.0), (5.0, "relative_humidity", 0.8, 0.7), (30.0, "dew_point", 12.0, 0.4), (26.0, "wet_bulb", 17.0, 0.2)], 97_000),
     condensate("drain at 84 kPa", (26.5, "relative_humidity", 0.52), (12.5, "relative_humidity", 0.94), 84_000, 1.9, 3.5, 900.0, 13.0),
 ]
+
+for more in (surface,):
+    CASES += more.CASES
 
 json.dump({"note": "CoolProp alone; [value in SI, relative tolerance, absolute tolerance].", "cases": CASES}, sys.stdout, indent=1)
 print()

@@ -29,6 +29,7 @@ pub mod air_state;
 pub mod book_constants;
 pub mod condensate;
 pub mod mixing;
+pub mod surface;
 
 pub use check::{About, Check, Group};
 pub use given::{Given, Moved, Reading};
@@ -45,6 +46,7 @@ pub static ALL: &[&dyn Check] = &[
     &book_constants::BookConstants,
     &mixing::Mixing,
     &condensate::Condensate,
+    &surface::Surface,
 ];
 
 /// The check with this identifier.

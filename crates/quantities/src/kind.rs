@@ -93,6 +93,12 @@ kinds! {
     Energy, "energy", "energy", "j", signed;
     /// Power per floor area. Stored in W/m².
     PowerPerArea, "power_per_area", "heat per area", "w_m2", signed;
+    /// Heat per length of a pipe. Stored in W/m.
+    PowerPerLength, "power_per_length", "heat per length", "w_m", signed;
+    /// Heat per area and temperature difference at a surface. Stored in W/(m² K).
+    FilmCoefficient, "film_coefficient", "film coefficient", "w_m2_k", plain;
+    /// Thermal conductivity of a material. Stored in W/(m K).
+    ThermalConductivity, "thermal_conductivity", "thermal conductivity", "w_m_k", plain;
     /// Absolute pressure of the air: a barometer's. Stored in Pa.
     Pressure, "pressure", "pressure of the air", "pa", plain;
     /// Gauge pressure, pressure difference, velocity pressure. Stored in Pa.

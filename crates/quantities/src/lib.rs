@@ -30,7 +30,7 @@ pub use sentence::Sentence;
 pub use show::{Shown, plain, show, show_with};
 pub use unit::Unit;
 pub use uom::si::f64::{
-    Area, ElectricCurrent, ElectricPotential, Energy, HeatFluxDensity, Length, MassDensity, Power,
-    Pressure, Ratio, SpecificHeatCapacity, SpecificVolume, TemperatureInterval,
-    ThermodynamicTemperature, Time, Velocity, Volume,
+    Area, ElectricCurrent, ElectricPotential, Energy, HeatFluxDensity, HeatTransfer, Length,
+    LinearPowerDensity, MassDensity, Power, Pressure, Ratio, SpecificHeatCapacity, SpecificVolume,
+    TemperatureInterval, ThermalConductivity, ThermodynamicTemperature, Time, Velocity, Volume,
 };

@@ -3,9 +3,10 @@
 use std::marker::PhantomData;
 
 use uom::si::f64::{
-    Area, AvailableEnergy, ElectricCurrent, ElectricPotential, Energy, HeatFluxDensity, Length,
-    MassDensity, MassRate, Power, Pressure, Ratio, SpecificHeatCapacity, SpecificVolume,
-    TemperatureInterval, ThermodynamicTemperature, Time, Velocity, Volume, VolumeRate,
+    Area, AvailableEnergy, ElectricCurrent, ElectricPotential, Energy, HeatFluxDensity,
+    HeatTransfer, Length, LinearPowerDensity, MassDensity, MassRate, Power, Pressure, Ratio,
+    SpecificHeatCapacity, SpecificVolume, TemperatureInterval, ThermalConductivity,
+    ThermodynamicTemperature, Time, Velocity, Volume, VolumeRate,
 };
 
 use crate::{Amount, Kind};
@@ -54,6 +55,9 @@ plain! {
     Power => Power;
     Energy => Energy;
     HeatFluxDensity => PowerPerArea;
+    LinearPowerDensity => PowerPerLength;
+    HeatTransfer => FilmCoefficient;
+    ThermalConductivity => ThermalConductivity;
     Pressure => Pressure;
     Length => Length;
     Area => Area;

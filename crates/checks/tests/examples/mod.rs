@@ -80,6 +80,19 @@ fn example(id: &str) -> Option<Example> {
                 ("fill2.time", Kind::Duration, "1204 s", "3 s"),
             ],
         },
+        "surface" => Example {
+            choices: &[
+                ("pressure.by", "elevation"),
+                ("air.humidity_by", "relative_humidity"),
+                ("surface.by", "read"),
+            ],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "5 m", ""),
+                ("air.dry_bulb", T, "24.0 C", "0.3 K"),
+                ("air.relative_humidity", Kind::RelativeHumidity, "60 %", "2.5 %"),
+                ("surface.temperature", T, "13.9 C", "0.5 K"),
+            ],
+        },
         _ => return None,
     })
 }

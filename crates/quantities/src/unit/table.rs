@@ -5,11 +5,12 @@
 use super::Scale;
 use crate::Kind::{
     AirFlow, Area, CondensateFlow, Current, Density, DryAirFlow, Duration, Elevation, Energy,
-    Enthalpy, EnthalpyDifference, HumidityRatio, HumidityRatioDifference, LatentConstant, Length,
-    Mass, MoistureFlow, MoleFraction, Power, PowerPerArea, Pressure, PressureDifference,
-    ProcessSlope, Ratio, RelativeHumidity, RoomVolume, SensibleConstant, Share, SpecificHeat,
-    SpecificVolume, StandardAirFlow, Temperature, TemperatureDifference, TotalConstant,
-    VapourPressure, Velocity, Voltage, WaterEnthalpy, WaterFlow, WaterVolume,
+    Enthalpy, EnthalpyDifference, FilmCoefficient, HumidityRatio, HumidityRatioDifference,
+    LatentConstant, Length, Mass, MoistureFlow, MoleFraction, Power, PowerPerArea, PowerPerLength,
+    Pressure, PressureDifference, ProcessSlope, Ratio, RelativeHumidity, RoomVolume,
+    SensibleConstant, Share, SpecificHeat, SpecificVolume, StandardAirFlow, Temperature,
+    TemperatureDifference, ThermalConductivity, TotalConstant, VapourPressure, Velocity, Voltage,
+    WaterEnthalpy, WaterFlow, WaterVolume,
 };
 use crate::{Kind, Unit};
 
@@ -159,6 +160,18 @@ units! {
     "Btu/h.ft2" "Btu/(h·ft²)" "Btu per hour and square foot" "[Btu_IT]/(h.[sft_i])"
         [scale(PowerPerArea, BTU_PER_HOUR / (FOOT * FOOT), 1)] ["Btu/h/ft2"];
     "W/m2" "W/m²" "watts per square metre" "W/m2" [scale(PowerPerArea, 1.0, 1)] [];
+    "Btu/h.ft" "Btu/(h·ft)" "Btu per hour and foot" "[Btu_IT]/(h.[ft_i])"
+        [scale(PowerPerLength, BTU_PER_HOUR / FOOT, 1)] ["Btu/h/ft"];
+    "W/m" "W/m" "watts per metre" "W/m" [scale(PowerPerLength, 1.0, 1)] [];
+    "Btu/h.ft2.F" "Btu/(h·ft²·°F)" "Btu per hour, square foot and degree Fahrenheit" "[Btu_IT]/(h.[sft_i].[degR])"
+        [scale(FilmCoefficient, BTU_PER_HOUR / (FOOT * FOOT) / FAHRENHEIT, 2)] ["Btu/h/ft2/F"];
+    "W/m2.K" "W/(m²·K)" "watts per square metre and kelvin" "W/(m2.K)" [scale(FilmCoefficient, 1.0, 1)] ["W/m2/K"];
+    "Btu.in/h.ft2.F" "Btu·in/(h·ft²·°F)" "Btu inches per hour, square foot and degree Fahrenheit"
+        "[Btu_IT].[in_i]/(h.[sft_i].[degR])"
+        [scale(ThermalConductivity, BTU_PER_HOUR / (12.0 * FOOT) / FAHRENHEIT, 2)] ["Btu in/h ft2 F"];
+    "Btu/h.ft.F" "Btu/(h·ft·°F)" "Btu per hour, foot and degree Fahrenheit" "[Btu_IT]/(h.[ft_i].[degR])"
+        [scale(ThermalConductivity, BTU_PER_HOUR / FOOT / FAHRENHEIT, 4)] ["Btu/h/ft/F"];
+    "W/m.K" "W/(m·K)" "watts per metre and kelvin" "W/(m.K)" [scale(ThermalConductivity, 1.0, 3)] ["W/m/K"];
 
     "kPa" "kPa" "kilopascals" "kPa" [scale(Pressure, 1e3, 2), scale(PressureDifference, 1e3, 3), scale(VapourPressure, 1e3, 3)] [];
     "hPa" "hPa" "hectopascals" "hPa" [scale(Pressure, 100.0, 1), scale(PressureDifference, 100.0, 2), scale(VapourPressure, 100.0, 2)] [];
