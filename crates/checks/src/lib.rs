@@ -28,6 +28,7 @@ pub mod air_heat;
 pub mod air_state;
 pub mod book_constants;
 pub mod condensate;
+pub mod fan_heat;
 pub mod mixing;
 pub mod surface;
 
@@ -46,6 +47,7 @@ pub static ALL: &[&dyn Check] = &[
     &book_constants::BookConstants,
     &mixing::Mixing,
     &condensate::Condensate,
+    &fan_heat::FanHeat,
     &surface::Surface,
 ];
 

@@ -80,6 +80,22 @@ fn example(id: &str) -> Option<Example> {
                 ("fill2.time", Kind::Duration, "1204 s", "3 s"),
             ],
         },
+        "fan_heat" => Example {
+            choices: &[
+                ("pressure.by", "elevation"),
+                ("flow.basis", "actual_entering"),
+                ("fan.motor", "in_stream"),
+            ],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "100 m", ""),
+                ("entering.dry_bulb", T, "13.5 C", "0.3 K"),
+                ("entering.wet_bulb", T, "12.6 C", "0.3 K"),
+                ("flow.rate", Kind::AirFlow, "4200 L/s", "4 %"),
+                ("fan.total_pressure", Kind::PressureDifference, "980 Pa", "30 Pa"),
+                ("fan.efficiency", Kind::Share, "62 %", "3 %"),
+                ("fan.motor_efficiency", Kind::Share, "91 %", "1 %"),
+            ],
+        },
         "surface" => Example {
             choices: &[
                 ("pressure.by", "elevation"),
