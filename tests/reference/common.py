@@ -32,3 +32,16 @@ def case(check, title, choices, given, p, results):
     choices = {"pressure.by": "read", **choices}
     given = {"pressure.read": [p, "Pa"], **given}
     return {"check": check, "title": title, "choices": choices, "readings": given, "results": results}
+
+
+def process(a, b, m, water=None):
+    """Total, sensible, latent and duty by the mean of the two ways round the corner."""
+    one, other = h_at(b["t"], a["w"], a["p"]), h_at(a["t"], b["w"], a["p"])
+    sensible = 0.5 * ((one - a["h"]) + (b["h"] - other))
+    latent = 0.5 * ((other - a["h"]) + (b["h"] - one))
+    total, dw = b["h"] - a["h"], b["w"] - a["w"]
+    out = {"total": [m * total, 2e-5, 0.5], "sensible": [m * sensible, 2e-5, 0.5], "latent": [m * latent, 1e-4, 0.5],
+           "moisture": [m * dw, 1e-4, 1e-8], "dry_air": [m, 2e-6, 0], "delta_h": [total, 2e-5, 0.1]}
+    if water is not None:
+        out["duty"] = [m * (total - dw * water), 2e-5, 0.5]
+    return out

@@ -4,8 +4,9 @@ import json
 import sys
 
 import fan_heat
+import recovery
 import surface
-from common import air, case, fluid, h_at, kelvin, readings, state
+from common import air, case, fluid, kelvin, process, readings, state
 
 
 def air_state(title, t, by, value, p):
@@ -19,19 +20,6 @@ def air_state(title, t, by, value, p):
         "relative_humidity": [air("R", *s["args"]), 2e-6, 0], "wet_bulb": [air("B", *s["args"]), 0, 1e-4],
         point: [dew, 0, 2e-4],
     })
-
-
-def process(a, b, m, water=None):
-    """Total, sensible, latent and duty by the mean of the two ways round the corner."""
-    one, other = h_at(b["t"], a["w"], a["p"]), h_at(a["t"], b["w"], a["p"])
-    sensible = 0.5 * ((one - a["h"]) + (b["h"] - other))
-    latent = 0.5 * ((other - a["h"]) + (b["h"] - one))
-    total, dw = b["h"] - a["h"], b["w"] - a["w"]
-    out = {"total": [m * total, 2e-5, 0.5], "sensible": [m * sensible, 2e-5, 0.5], "latent": [m * latent, 1e-4, 0.5],
-           "moisture": [m * dw, 1e-4, 1e-8], "dry_air": [m, 2e-6, 0], "delta_h": [total, 2e-5, 0.1]}
-    if water is not None:
-        out["duty"] = [m * (total - dw * water), 2e-5, 0.5]
-    return out
 
 
 def air_heat(title, first, second, p, flow, basis, unit="m3/s", water_at=None):
@@ -123,7 +111,7 @@ CASES = [
     condensate("drain at 84 kPa", (26.5, "relative_humidity", 0.52), (12.5, "relative_humidity", 0.94), 84_000, 1.9, 3.5, 900.0, 13.0),
 ]
 
-for more in (fan_heat, surface):
+for more in (recovery, fan_heat, surface):
     CASES += more.CASES
 
 json.dump({"note": "CoolProp alone; [value in SI, relative tolerance, absolute tolerance].", "cases": CASES}, sys.stdout, indent=1)

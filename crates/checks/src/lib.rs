@@ -30,6 +30,7 @@ pub mod book_constants;
 pub mod condensate;
 pub mod fan_heat;
 pub mod mixing;
+pub mod recovery;
 pub mod surface;
 
 pub use check::{About, Check, Group};
@@ -47,6 +48,7 @@ pub static ALL: &[&dyn Check] = &[
     &book_constants::BookConstants,
     &mixing::Mixing,
     &condensate::Condensate,
+    &recovery::Recovery,
     &fan_heat::FanHeat,
     &surface::Surface,
 ];

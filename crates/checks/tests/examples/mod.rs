@@ -80,6 +80,28 @@ fn example(id: &str) -> Option<Example> {
                 ("fill2.time", Kind::Duration, "1204 s", "3 s"),
             ],
         },
+        "recovery" => Example {
+            choices: &[
+                ("pressure.by", "read"),
+                ("device.kind", "moist_wheel"),
+                ("outdoor.humidity_by", "relative_humidity"),
+                ("supply.humidity_by", "relative_humidity"),
+                ("return.humidity_by", "relative_humidity"),
+                ("supply_flow.basis", "actual_supply"),
+                ("return_flow.basis", "actual_return"),
+            ],
+            readings: &[
+                ("pressure.read", Kind::Pressure, "100.8 kPa", "0.2 kPa"),
+                ("outdoor.dry_bulb", T, "33.0 C", "0.3 K of stem"),
+                ("outdoor.relative_humidity", Kind::RelativeHumidity, "50 %", "1.5 % of probe"),
+                ("supply.dry_bulb", T, "26.6 C", "0.3 K of stem"),
+                ("supply.relative_humidity", Kind::RelativeHumidity, "52 %", "1.5 % of probe"),
+                ("return.dry_bulb", T, "23.5 C", "0.3 K of stem"),
+                ("return.relative_humidity", Kind::RelativeHumidity, "45 %", "1.5 % of probe"),
+                ("supply_flow.rate", Kind::AirFlow, "1700 L/s", "4 %"),
+                ("return_flow.rate", Kind::AirFlow, "1400 L/s", "4 %"),
+            ],
+        },
         "fan_heat" => Example {
             choices: &[
                 ("pressure.by", "elevation"),
