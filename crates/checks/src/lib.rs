@@ -29,6 +29,7 @@ pub mod air_state;
 pub mod book_constants;
 pub mod condensate;
 pub mod fan_heat;
+pub mod humidifying;
 pub mod mixing;
 pub mod recovery;
 pub mod surface;
@@ -49,6 +50,7 @@ pub static ALL: &[&dyn Check] = &[
     &mixing::Mixing,
     &condensate::Condensate,
     &recovery::Recovery,
+    &humidifying::Humidifying,
     &fan_heat::FanHeat,
     &surface::Surface,
 ];

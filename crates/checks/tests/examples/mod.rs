@@ -102,6 +102,21 @@ fn example(id: &str) -> Option<Example> {
                 ("return_flow.rate", Kind::AirFlow, "1400 L/s", "4 %"),
             ],
         },
+        "humidifying" => Example {
+            choices: &[
+                ("pressure.by", "elevation"),
+                ("method.by", "evaporative"),
+                ("pad.by", "leaving"),
+                ("flow.basis", "actual_entering"),
+            ],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "1280 m", ""),
+                ("entering.dry_bulb", T, "38.9 C", "0.3 K of dry"),
+                ("entering.wet_bulb", T, "17.2 C", "0.3 K"),
+                ("pad.leaving_dry_bulb", T, "21.1 C", "0.3 K of dry"),
+                ("flow.rate", Kind::AirFlow, "3775 L/s", "5 %"),
+            ],
+        },
         "fan_heat" => Example {
             choices: &[
                 ("pressure.by", "elevation"),
