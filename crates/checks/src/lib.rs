@@ -29,6 +29,7 @@ pub mod air_state;
 pub mod book_constants;
 pub mod condensate;
 pub mod fan_heat;
+pub mod heat_rise;
 pub mod humidifying;
 pub mod mixing;
 pub mod recovery;
@@ -51,6 +52,7 @@ pub static ALL: &[&dyn Check] = &[
     &condensate::Condensate,
     &recovery::Recovery,
     &humidifying::Humidifying,
+    &heat_rise::HeatRise,
     &fan_heat::FanHeat,
     &surface::Surface,
 ];

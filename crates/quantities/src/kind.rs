@@ -115,6 +115,10 @@ kinds! {
     WaterVolume, "water_volume", "volume of water", "m3", plain;
     /// A volume of a room. Stored in m³.
     RoomVolume, "room_volume", "volume of a room", "m3", plain;
+    /// A volume of fuel gas, as its meter counts it. Stored in m³.
+    FuelVolume, "fuel_volume", "volume of gas", "m3", plain;
+    /// Heat that a volume of fuel gas gives, at a stated pressure and temperature. Stored in J/m³.
+    HeatingValue, "heating_value", "heating value", "j_m3", plain;
     /// Mass of water. Stored in kg.
     Mass, "mass", "mass", "kg", plain;
     /// Velocity of air. Stored in m/s.

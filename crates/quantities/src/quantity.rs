@@ -123,6 +123,8 @@ newtypes! {
     WaterVolume(Volume) => WaterVolume;
     /// Volume of a room, m³.
     RoomVolume(Volume) => RoomVolume;
+    /// A volume of fuel gas, m³ as its meter counts it.
+    FuelVolume(Volume) => FuelVolume;
     /// A share of a whole or an error, shown in per cent; 1 is 100 %.
     Share(Ratio) => Share;
     /// Mole fraction of a gas, 1 is all.
@@ -158,6 +160,8 @@ composed! {
     TotalConstant => TotalConstant;
     /// Heat per volume flow and humidity-ratio difference, J/m³: the book's 4840.
     LatentConstant => LatentConstant;
+    /// Heat of a volume of fuel gas, J/m³ at a stated pressure and temperature.
+    HeatingValue => HeatingValue;
 }
 
 /// `warm - cool` as an interval. uom has no subtraction of two absolute temperatures; this is the one place for it.

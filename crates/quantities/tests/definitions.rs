@@ -80,6 +80,7 @@ fn factors_are_those_of_nist_sp_811() {
         ("gal/min", Kind::WaterFlow, 6.309_020e-5),
         ("gal", Kind::WaterVolume, 3.785_412e-3),
         ("ft3", Kind::RoomVolume, 2.831_685e-2),
+        ("Btu/ft3", Kind::HeatingValue, 3.725_895e4),
         ("lb/h", Kind::MoistureFlow, 1.259_979e-4),
         ("fpm", Kind::Velocity, 5.08e-3),
         ("Btu/h.ft2", Kind::PowerPerArea, 3.154_591),

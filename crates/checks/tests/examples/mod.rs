@@ -117,6 +117,17 @@ fn example(id: &str) -> Option<Example> {
                 ("flow.rate", Kind::AirFlow, "3775 L/s", "5 %"),
             ],
         },
+        "heat_rise" => Example {
+            choices: &[("pressure.by", "elevation"), ("power.by", "three_phase")],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "1829 m", ""),
+                ("entering.dry_bulb", T, "17.5 C", "0.3 K of stem"),
+                ("leaving.dry_bulb", T, "31.1 C", "0.3 K of stem"),
+                ("power.voltage", Kind::Voltage, "208 V", "2 V"),
+                ("power.current", Kind::Current, "41.5 A", "0.8 A"),
+                ("power.factor", Kind::Ratio, "97 %", "0.5 %"),
+            ],
+        },
         "fan_heat" => Example {
             choices: &[
                 ("pressure.by", "elevation"),

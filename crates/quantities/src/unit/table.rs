@@ -5,12 +5,12 @@
 use super::Scale;
 use crate::Kind::{
     AirFlow, Area, CondensateFlow, Current, Density, DryAirFlow, Duration, Elevation, Energy,
-    Enthalpy, EnthalpyDifference, FilmCoefficient, HumidityRatio, HumidityRatioDifference,
-    LatentConstant, Length, Mass, MoistureFlow, MoleFraction, Power, PowerPerArea, PowerPerLength,
-    Pressure, PressureDifference, ProcessSlope, Ratio, RelativeHumidity, RoomVolume,
-    SensibleConstant, Share, SpecificHeat, SpecificVolume, StandardAirFlow, Temperature,
-    TemperatureDifference, ThermalConductivity, TotalConstant, VapourPressure, Velocity, Voltage,
-    WaterEnthalpy, WaterFlow, WaterVolume,
+    Enthalpy, EnthalpyDifference, FilmCoefficient, FuelVolume, HeatingValue, HumidityRatio,
+    HumidityRatioDifference, LatentConstant, Length, Mass, MoistureFlow, MoleFraction, Power,
+    PowerPerArea, PowerPerLength, Pressure, PressureDifference, ProcessSlope, Ratio,
+    RelativeHumidity, RoomVolume, SensibleConstant, Share, SpecificHeat, SpecificVolume,
+    StandardAirFlow, Temperature, TemperatureDifference, ThermalConductivity, TotalConstant,
+    VapourPressure, Velocity, Voltage, WaterEnthalpy, WaterFlow, WaterVolume,
 };
 use crate::{Kind, Unit};
 
@@ -196,8 +196,11 @@ units! {
     "gal" "gal (US)" "US gallons" "[gal_us]" [scale(WaterVolume, GALLON, 2)] ["US gal", "gallon", "gallons"];
     "L" "L" "litres" "L" [scale(WaterVolume, LITRE, 2)] ["litre", "litres", "liter", "liters"];
     "mL" "mL" "millilitres" "mL" [scale(WaterVolume, 1e-3 * LITRE, 0)] [];
-    "ft3" "ft³" "cubic feet" "[cft_i]" [scale(RoomVolume, CUBIC_FOOT, 0)] ["cubic feet"];
-    "m3" "m³" "cubic metres" "m3" [scale(RoomVolume, 1.0, 1)] [];
+    "ft3" "ft³" "cubic feet" "[cft_i]" [scale(RoomVolume, CUBIC_FOOT, 0), scale(FuelVolume, CUBIC_FOOT, 2)] ["cubic feet"];
+    "m3" "m³" "cubic metres" "m3" [scale(RoomVolume, 1.0, 1), scale(FuelVolume, 1.0, 3)] [];
+    "Btu/ft3" "Btu/ft³" "Btu per cubic foot" "[Btu_IT]/[cft_i]" [scale(HeatingValue, BTU / CUBIC_FOOT, 0)] [];
+    "MJ/m3" "MJ/m³" "megajoules per cubic metre" "MJ/m3" [scale(HeatingValue, 1e6, 2)] [];
+    "kWh/m3" "kWh/m³" "kilowatt hours per cubic metre" "kW.h/m3" [scale(HeatingValue, 1e3 * HOUR, 2)] [];
     "lb" "lb" "pounds" "[lb_av]" [scale(Mass, POUND, 2)] ["pound", "pounds"];
     "kg" "kg" "kilograms" "kg" [scale(Mass, 1.0, 3)] [];
     "fpm" "ft/min" "feet per minute" "[ft_i]/min" [scale(Velocity, FOOT / MINUTE, 0)] ["feet per minute"];
