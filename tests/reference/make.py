@@ -6,6 +6,7 @@ import sys
 import fan_heat
 import heat_rise
 import humidifying
+import outdoor_share
 import recovery
 import surface
 from common import air, case, fluid, kelvin, process, readings, state
@@ -113,7 +114,7 @@ CASES = [
     condensate("drain at 84 kPa", (26.5, "relative_humidity", 0.52), (12.5, "relative_humidity", 0.94), 84_000, 1.9, 3.5, 900.0, 13.0),
 ]
 
-for more in (recovery, humidifying, heat_rise, fan_heat, surface):
+for more in (outdoor_share, recovery, humidifying, heat_rise, fan_heat, surface):
     CASES += more.CASES
 
 json.dump({"note": "CoolProp alone; [value in SI, relative tolerance, absolute tolerance].", "cases": CASES}, sys.stdout, indent=1)

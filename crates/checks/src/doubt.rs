@@ -73,9 +73,10 @@ pub fn work_out(check: &dyn Check, given: &Given) -> Result<Worked, Stop> {
         slips::offer(check, given, &mut first);
     }
     let first = first?;
-    let doubts = first_order::doubts(check, given, &first);
-    // With the doubt known, a difference counts as resolved by that doubt instead of the floor for unstated ±.
     let mut informed = given.clone();
+    informed.keep(&first.kept);
+    let doubts = first_order::doubts(check, &informed, &first);
+    // With the doubt known, a difference counts as resolved by that doubt instead of the floor for unstated ±.
     for (key, doubt) in &doubts {
         if doubt.unknown.is_empty() && doubt.u_si > 0.0 {
             informed.set_floor(key, 2.0 * doubt.u_si);

@@ -34,6 +34,7 @@ pub struct Given {
     parts: BTreeMap<String, Vec<Part>>,
     shifts: BTreeMap<&'static str, f64>,
     floors: BTreeMap<String, f64>,
+    kept: BTreeMap<String, f64>,
     drawing: bool,
 }
 
@@ -129,6 +130,17 @@ impl Given {
             return 0.0;
         }
         self.floors.get(difference).copied().unwrap_or(unstated)
+    }
+
+    /// A value that a check found before and that stays while the readings are moved.
+    #[must_use]
+    pub fn kept(&self, what: &str) -> Option<f64> {
+        self.kept.get(what).copied()
+    }
+
+    /// Keeps what a check found.
+    pub(crate) fn keep(&mut self, kept: &BTreeMap<String, f64>) {
+        self.kept.extend(kept.iter().map(|(what, value)| (what.clone(), *value)));
     }
 
     /// Sets the floor of a difference from its known doubt.

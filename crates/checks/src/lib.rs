@@ -32,6 +32,7 @@ pub mod fan_heat;
 pub mod heat_rise;
 pub mod humidifying;
 pub mod mixing;
+pub mod outdoor_share;
 pub mod recovery;
 pub mod surface;
 
@@ -49,6 +50,7 @@ pub static ALL: &[&dyn Check] = &[
     &air_state::AirState,
     &book_constants::BookConstants,
     &mixing::Mixing,
+    &outdoor_share::OutdoorShare,
     &condensate::Condensate,
     &recovery::Recovery,
     &humidifying::Humidifying,

@@ -1,5 +1,7 @@
 //! What a check answers: results, notes, cautions, the working, the states behind it.
 
+use std::collections::BTreeMap;
+
 use dewledger_properties::MoistAir;
 use dewledger_quantities::{Amount, Sentence};
 
@@ -27,6 +29,8 @@ pub struct Outcome {
     pub curves: Vec<Curve>,
     /// Tables that are results in themselves.
     pub tables: Vec<Table>,
+    /// Values that stay as they are while the readings are moved for its doubt: weights found from that doubt.
+    pub kept: BTreeMap<String, f64>,
     /// Keys of the points that were taken as saturated within their ±.
     pub saturated: Vec<String>,
     /// Where the pressure comes from, for the line under the title.

@@ -80,6 +80,26 @@ fn example(id: &str) -> Option<Example> {
                 ("fill2.time", Kind::Duration, "1204 s", "3 s"),
             ],
         },
+        "outdoor_share" => Example {
+            choices: &[
+                ("pressure.by", "elevation"),
+                ("return.humidity_by", "relative_humidity"),
+                ("outdoor.humidity_by", "relative_humidity"),
+                ("mixed.humidity_by", "relative_humidity"),
+            ],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "850 m", ""),
+                ("return.dry_bulb", T, "23.6 C", "0.3 K of stem"),
+                ("return.relative_humidity", Kind::RelativeHumidity, "42 %", "1.5 % of probe"),
+                ("outdoor.dry_bulb", T, "6.0 C", "0.3 K of stem"),
+                ("outdoor.relative_humidity", Kind::RelativeHumidity, "60 %", "1.5 % of probe"),
+                ("mixed.dry_bulb", T, "18.9 C", "0.5 K of stem"),
+                ("mixed.relative_humidity", Kind::RelativeHumidity, "43 %", "1.5 % of probe"),
+                ("co2.return", Kind::MoleFraction, "965 ppm", "20 ppm of analyser"),
+                ("co2.outdoor", Kind::MoleFraction, "428 ppm", "20 ppm of analyser"),
+                ("co2.mixed", Kind::MoleFraction, "818 ppm", "20 ppm of analyser"),
+            ],
+        },
         "recovery" => Example {
             choices: &[
                 ("pressure.by", "read"),
