@@ -62,7 +62,7 @@ function build(element, props, children) {
 
 /** @param {Element} element */
 function isEntry(element) {
-  return element.nodeName === 'INPUT' || element.nodeName === 'TEXTAREA';
+  return element.nodeName === 'INPUT' || element.nodeName === 'TEXTAREA' || element.nodeName === 'SELECT';
 }
 
 /**

@@ -61,3 +61,12 @@ export function asked(typed, requirement, index) {
 export function unasked(typed, index) {
   return { ...typed, requirements: (typed.requirements ?? []).filter((_, at) => at !== index) };
 }
+
+/**
+ * A take as it was typed, with the unit beside it unless it carries one of its own.
+ * @param {string} text
+ * @param {string} unit
+ */
+export function takeText(text, unit) {
+  return /^[\s\d.,'+\-\u2212\u00a0\u2009\u202f]*$/.test(text) ? `${text}\u00a0${unit}` : text;
+}

@@ -91,7 +91,8 @@ export function openSheet(title, draw) {
     history.pushState({ ...history.state, sheets: open.length }, '');
     dialog.showModal();
     const first = /** @type {HTMLElement | null} */ (
-      dialog.querySelector('[data-first], [aria-checked="true"], .sheet-body input, .sheet-body button')
+      dialog.querySelector('[data-first]') ??
+        dialog.querySelector('[aria-checked="true"], .sheet-body input, .sheet-body button')
     );
     first?.focus();
   });
@@ -104,4 +105,12 @@ export function openSheet(title, draw) {
 function isBeside(dialog, event) {
   const box = dialog.getBoundingClientRect();
   return event.clientX < box.left || event.clientX > box.right || event.clientY < box.top || event.clientY > box.bottom;
+}
+
+/**
+ * The acts of a sheet: they stay in sight at its foot, the main one at the right under the thumb.
+ * @param {...import('./dom.js').Child} acts
+ */
+export function sheetActs(...acts) {
+  return h('div', { class: 'sheet-acts' }, acts);
 }

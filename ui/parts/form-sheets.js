@@ -84,8 +84,3 @@ export async function unitSheet(form, view) {
   if (unit === all) go('#/units');
   else if (unit !== undefined) form.unit(view.key, unit);
 }
-
-/** @param {string} text */
-export function lowerFirst(text) {
-  return text.charAt(0).toLowerCase() + text.slice(1);
-}

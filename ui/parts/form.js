@@ -292,10 +292,9 @@ export class Form {
       view.read_as && { id: `${id}-read`, says: view.read_as },
       view.with?.takes.says && {
         id: `${id}-takes`,
-        says: [view.with.takes.word, view.with.takes.says].filter(Boolean).join('. '),
+        says: [h('strong', null, view.with.takes.word), '. ', view.with.takes.says],
       },
       view.with?.corrected && { id: `${id}-corrected`, says: view.with.corrected },
-      view.with?.probe && text !== '' && { id: `${id}-probe`, says: view.with.label },
     ].filter((one) => one !== null && one !== undefined && one !== false && one !== '');
     const describes = [
       ...asides.map((one) => one.id),
@@ -319,7 +318,9 @@ export class Form {
             'aria-haspopup': 'dialog',
             onclick: () => readingSheet(this, view),
           },
-          h('u', null, view.plus_minus || 'add a ±'),
+          view.with?.probe
+            ? [h('u', { class: 'probe' }, view.with.label), h('span', { class: 'pm' }, view.plus_minus)]
+            : h('u', null, view.plus_minus || 'add a ±'),
           h('span', { class: 'sr' }, `, ± of ${view.label}, change`),
         ),
       ),
@@ -327,6 +328,7 @@ export class Form {
         'div',
         { class: 'entry' },
         view.signed &&
+          mean === null &&
           h(
             'button',
             {
@@ -349,7 +351,9 @@ export class Form {
           'aria-describedby': describes.join(' '),
           'aria-invalid': error && text !== '' ? 'true' : null,
           readonly: mean !== null,
+          title: mean === null ? null : 'The mean of its takes: tap to see them',
           value: text,
+          onclick: mean === null ? null : () => readingSheet(this, view, 'takes'),
           oninput: (/** @type {Event} */ event) =>
             this.type(view, /** @type {HTMLInputElement} */ (event.target).value),
           onblur: () => this.left(),

@@ -3,70 +3,80 @@
 
 import { h } from '../lib/dom.js';
 import { icon } from '../lib/icons.js';
-import { said, take, withoutTake } from '../lib/reading.js';
+import { said, take, takeText, withoutTake } from '../lib/reading.js';
 import { say } from '../lib/say.js';
 import { button, go, link } from '../lib/screen.js';
-import { openSheet } from '../lib/sheet.js';
-import { lowerFirst, radioRow } from './form-sheets.js';
+import { openSheet, sheetActs } from '../lib/sheet.js';
+import { changeSign } from '../lib/typed.js';
+import { radioRow } from './form-sheets.js';
 
 /** @typedef {import('./form.js').Form} Form */
 /** @typedef {import('./form.js').Reading} Reading */
 
+/** @typedef {'with' | 'held' | 'takes'} SheetPart */
+
+/** @type {SheetPart} The part used last: one who takes one reading after the other finds the key at once. */
+let last = 'with';
+
 /**
  * @param {Form} form
  * @param {Reading} view
+ * @param {SheetPart} [first] the part that stands open at first
  */
-export async function readingSheet(form, view) {
+export async function readingSheet(form, view, first = last) {
   const elsewhere = 'instruments';
-  let part = 'with';
-  const typing = { text: '' };
-  const done = await openSheet(
-    lowerFirst(view.label) === view.label ? view.label : view.label,
-    (/** @type {import('../lib/sheet.js').Sheet<string>} */ sheet) => {
-      form.watch(() => sheet.redraw());
-      const now = form.readings().find((one) => one.key === view.key) ?? view;
-      const parts = [
-        ['with', 'Read with'],
-        ['held', 'Place'],
-        ['takes', now.with?.takes.rows.length ? `Takes: ${now.with.takes.rows.length}` : 'Takes'],
-      ];
-      return [
-        h('p', { class: 'mute', 'aria-live': 'polite' }, `${now.name}. ${now.plus_minus || 'No ± is needed.'}`),
-        now.with &&
-          h(
-            'div',
-            { class: 'seg', role: 'group', 'aria-label': 'About this reading' },
-            parts.map(([id, label]) =>
-              h(
-                'button',
-                {
-                  type: 'button',
-                  class: part === id ? 'on' : null,
-                  'aria-pressed': String(part === id),
-                  onclick: () => {
-                    part = id ?? 'with';
-                    sheet.redraw();
-                  },
-                },
-                label,
-              ),
-            ),
-          ),
-        (!now.with || part === 'with') && [
-          now.with && probes(form, now, now.with, () => sheet.close(elsewhere)),
-          plusMinus(form, now),
-          now.with && madeOf(now.with),
-        ],
-        now.with && part === 'held' && held(form, now, now.with),
-        now.with && part === 'takes' && takes(form, now, now.with, typing, sheet.redraw),
+  let part = first;
+  // What stands in the field already is what the display shows: one tap makes it the first take.
+  const typing = { text: view.with?.takes.rows.length ? '' : form.text(view) };
+  const done = await openSheet(view.label, (/** @type {import('../lib/sheet.js').Sheet<string>} */ sheet) => {
+    form.watch(() => {
+      const taken = document.querySelectorAll('.takes li').length;
+      sheet.redraw();
+      const takes = document.querySelectorAll('.takes li');
+      if (takes.length > taken) takes[takes.length - 1]?.scrollIntoView({ block: 'nearest' });
+    });
+    const now = form.readings().find((one) => one.key === view.key) ?? view;
+    const taken = now.with?.takes.rows.length ?? 0;
+    const parts = /** @type {const} */ ([
+      ['with', 'Read with'],
+      ['held', 'Place'],
+      ['takes', taken > 0 ? `Takes: ${taken}` : 'Takes'],
+    ]);
+    const done = (/** @type {string} */ kind) => button('Done', () => sheet.close(), { kind });
+    return [
+      h('p', { class: 'mute', 'aria-live': 'polite' }, `${now.name}. ${now.plus_minus || 'No ± is needed.'}`),
+      now.with &&
         h(
           'div',
-          { class: 'stack gap' },
-          button('Done', () => sheet.close(), { kind: 'go' }),
+          { class: 'seg', role: 'group', 'aria-label': 'About this reading' },
+          parts.map(([id, label]) =>
+            h(
+              'button',
+              {
+                type: 'button',
+                class: part === id ? 'on' : null,
+                'aria-pressed': String(part === id),
+                onclick: () => {
+                  part = id;
+                  last = id;
+                  sheet.redraw();
+                },
+              },
+              label,
+            ),
+          ),
         ),
-      ];
-    },
-  );
+      (!now.with || part === 'with') && [
+        now.with && probes(form, now, now.with, () => sheet.close(elsewhere)),
+        now.with && madeOf(now.with),
+        plusMinus(form, now),
+      ],
+      now.with && part === 'held' && held(form, now, now.with),
+      now.with && part === 'takes'
+        ? [takes(form, now, now.with), takeKey(form, now, typing, sheet.redraw, done('narrow'))]
+        : sheetActs(done('go')),
+    ];
+  });
   form.watch(null);
   if (done === elsewhere) go('#/instruments');
 }
@@ -267,83 +277,53 @@ function held(form, view, beside) {
 }
 
 /**
+ * The takes so far, what they come to, and whether they stand still.
  * @param {Form} form
  * @param {Reading} view
  * @param {Desk.ReadWith} beside
- * @param {{ text: string }} typing
- * @param {() => void} redraw
  */
-function takes(form, view, beside, typing, redraw) {
-  const stamp = () => {
-    if (typing.text.trim() === '') return;
-    form.put(take(form.typed, view.key, typing.text, view.unit.id, new Date().toISOString()));
-    say(`Taken: ${typing.text}`);
-    typing.text = '';
-    redraw();
-  };
+function takes(form, view, beside) {
+  const { rows, word, says, steadiness } = beside.takes;
   return [
-    h('h3', null, 'Takes'),
-    h(
-      'p',
-      { class: 'mute' },
-      'Type what the display shows and take it: each take keeps its time. Their mean is the reading.',
-    ),
-    h(
-      'div',
-      { class: 'entry' },
-      h('input', {
-        id: 'take-text',
-        type: 'text',
-        inputmode: 'decimal',
-        enterkeyhint: 'enter',
-        autocomplete: 'off',
-        'aria-label': `Next take of ${view.name}`,
-        value: typing.text,
-        oninput: (/** @type {Event} */ event) => {
-          typing.text = /** @type {HTMLInputElement} */ (event.target).value;
-        },
-        onkeydown: (/** @type {KeyboardEvent} */ event) => {
-          if (event.key !== 'Enter') return;
-          event.preventDefault();
-          stamp();
-        },
-      }),
-      h('span', { class: 'unit' }, view.unit.symbol),
-    ),
-    h('button', { type: 'button', class: 'btn take', onclick: stamp }, h('span', null, 'Take')),
-    beside.takes.word &&
+    rows.length === 0 &&
       h(
         'p',
-        { class: `steadiness ${beside.takes.steadiness}`, 'aria-live': 'polite' },
-        h('strong', null, beside.takes.word),
-        beside.takes.says && h('span', null, beside.takes.says),
+        { class: 'lede gap' },
+        'Type what the display shows and take it: each take keeps its time, and their mean is the reading.',
       ),
-    beside.takes.rows.length > 0 &&
+    word &&
+      h(
+        'p',
+        { class: `steadiness ${steadiness}`, 'aria-live': 'polite' },
+        h('strong', null, word),
+        says && h('span', null, says),
+      ),
+    rows.length > 0 &&
       h(
         'ol',
         { class: 'takes', 'aria-label': 'Takes so far' },
-        beside.takes.rows.map((row, index) =>
+        rows.map((row, index) =>
           h(
             'li',
             null,
             h('span', { class: 'at' }, row.at),
-            h('b', null, row.text, ' ', view.unit.symbol),
-            row.error && h('span', { class: 'wrong-words' }, row.error),
+            h('b', null, takeText(row.text, view.unit.symbol)),
             h(
               'button',
               {
                 type: 'button',
                 class: 'icon-btn',
-                'aria-label': `Remove the take of ${row.at}`,
+                'aria-label': `Remove the take of ${row.at}, ${row.text}`,
                 onclick: () => form.put(withoutTake(form.typed, view.key, index, view.unit.id)),
               },
               icon('close', 'i-s'),
             ),
+            row.error && h('span', { class: 'wrong-words' }, row.error),
           ),
         ),
       ),
     view.error && h('p', { class: 'ask wrong-words', role: 'alert' }, view.error.says),
-    beside.takes.rows.length > 1 &&
+    rows.length > 1 &&
       beside.takes.at_time_of.length > 1 && [
         h('h3', { id: 'sheet-aba' }, 'What counts'),
         h(
@@ -360,6 +340,80 @@ function takes(form, view, beside, typing, redraw) {
         ),
       ],
   ];
+}
+
+/**
+ * The field for the next take and the large key under the thumb.
+ * @param {Form} form
+ * @param {Reading} view
+ * @param {{ text: string }} typing
+ * @param {() => void} redraw
+ * @param {HTMLElement} done
+ */
+function takeKey(form, view, typing, redraw, done) {
+  const id = 'take-text';
+  const stamp = () => {
+    const input = document.getElementById(id);
+    input?.focus();
+    if (typing.text.trim() === '') return;
+    form.put(take(form.typed, view.key, typing.text.trim(), view.unit.id, new Date().toISOString()));
+    say(`Taken: ${typing.text}`);
+    typing.text = '';
+    redraw();
+  };
+  return h(
+    'div',
+    { class: 'sheet-acts' },
+    h(
+      'div',
+      { class: 'entry' },
+      view.signed &&
+        h(
+          'button',
+          {
+            type: 'button',
+            class: 'sign',
+            'aria-label': 'Change sign of the take',
+            onclick: () => {
+              typing.text = changeSign(typing.text);
+              redraw();
+            },
+          },
+          icon('sign'),
+        ),
+      h('input', {
+        id,
+        type: 'text',
+        inputmode: 'decimal',
+        enterkeyhint: 'enter',
+        autocomplete: 'off',
+        'data-first': true,
+        'aria-label': `Next take of ${view.name}`,
+        value: typing.text,
+        oninput: (/** @type {Event} */ event) => {
+          typing.text = /** @type {HTMLInputElement} */ (event.target).value;
+        },
+        onkeydown: (/** @type {KeyboardEvent} */ event) => {
+          if (event.key !== 'Enter' || event.isComposing) return;
+          event.preventDefault();
+          stamp();
+        },
+      }),
+      h('span', { class: 'unit' }, view.unit.symbol),
+    ),
+    done,
+    h(
+      'button',
+      {
+        type: 'button',
+        class: 'btn go take',
+        // The keyboard stays up for the next take.
+        onpointerdown: (/** @type {Event} */ event) => event.preventDefault(),
+        onclick: stamp,
+      },
+      h('span', null, 'Take'),
+    ),
+  );
 }
 
 /**

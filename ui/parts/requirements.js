@@ -3,7 +3,7 @@
 import { h } from '../lib/dom.js';
 import { icon } from '../lib/icons.js';
 import { button, link } from '../lib/screen.js';
-import { openSheet } from '../lib/sheet.js';
+import { openSheet, sheetActs } from '../lib/sheet.js';
 import { noteView } from './note.js';
 
 /** @typedef {(requirement: Desk.TypedRequirement | null, index: number | null) => void} Put */
@@ -44,8 +44,8 @@ function verdictView(verdict, typed, view, put) {
     verdict.word && h('p', { class: 'word' }, icon(sign(verdict.answer ?? null)), h('strong', null, verdict.word)),
     verdict.says && h('p', null, verdict.says, verdict.chance && ` ${upperFirst(verdict.chance)}.`),
     verdict.decides.map((says) => h('p', null, says)),
-    verdict.share && h('p', { class: 'mute' }, verdict.share),
     verdict.why_not && h('p', null, verdict.why_not.says),
+    verdict.share && h('p', { class: 'mute' }, verdict.share),
     verdict.errors.map((error) => h('p', { class: 'wrong-words' }, error.says)),
     put &&
       typed &&
@@ -222,11 +222,7 @@ async function ask(view, typed, index, put) {
         ),
         errors.length > 0 &&
           noteView({ id: 'asked-errors', tone: 'impossible', lead: errors.map((error) => error.says).join(' ') }),
-        h(
-          'div',
-          { class: 'stack gap' },
-          button('Hold it against this', () => sheet.close(now), { kind: 'go' }),
-        ),
+        sheetActs(button('Hold it against this', () => sheet.close(now), { kind: 'go' })),
       ];
     },
   );
@@ -285,8 +281,9 @@ export function choose(label, value, options, chosen, id) {
       id: id ?? null,
       class: 'select',
       'aria-label': label || null,
+      value,
       onchange: (/** @type {Event} */ event) => chosen(/** @type {HTMLSelectElement} */ (event.target).value),
     },
-    options.map((option) => h('option', { value: option.value, selected: option.value === value }, option.label)),
+    options.map((option) => h('option', { value: option.value }, option.label)),
   );
 }

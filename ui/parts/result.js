@@ -29,11 +29,7 @@ export function strip(solved, { quiet = false, unusual = 0 } = {}) {
       value?.unit && h('span', { class: 'u' }, value.unit),
       value &&
         headline.plus_minus &&
-        h(
-          'span',
-          { class: typeof headline.plus_minus.si === 'number' ? 'pm' : 'pm unknown' },
-          headline.plus_minus.text,
-        ),
+        h('span', { class: plusMinusClass(headline.plus_minus) }, headline.plus_minus.text),
       value && headline.also && h('span', { class: 'of' }, headline.also),
       why && h('span', { class: 'why' }, why),
     ),
@@ -249,7 +245,13 @@ export function figures(rows, caption) {
  */
 function plusMinusCell({ value, plus_minus: plusMinus }) {
   if (!value || !plusMinus) return h('td', { class: 'pm' });
-  return h('td', { class: typeof plusMinus.si === 'number' ? 'pm' : 'pm unknown' }, plusMinus.text);
+  return h('td', { class: plusMinusClass(plusMinus) }, plusMinus.text);
+}
+
+/** An interval stands where a ± would mislead. @param {Desk.PlusMinusView} plusMinus */
+function plusMinusClass({ si, interval }) {
+  if (typeof si === 'number') return 'pm';
+  return interval ? 'pm interval' : 'pm unknown';
 }
 
 /**

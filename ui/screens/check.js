@@ -43,25 +43,22 @@ export class Check extends Screen {
   );
   #solver = new Latest(
     (/** @type {Kept} */ { typed, place }) => ask({ ask: 'solve', check: this.#check(), typed, place }, 'solved'),
-    (solved) => {
-      this.#restless = false;
-      this.#take(solved);
-    },
+    (solved) => this.#take(solved),
     (error) => this.#say(error),
   );
   #drawer = new Latest(
-    (/** @type {Kept} */ { typed, place }) =>
-      ask({ ask: 'draw', check: this.#check(), typed, place }, 'solved', 'overtaken'),
-    (solved) => {
-      // A newer form is on its way: what was drawn for the old one is of no use.
-      if (solved.reply === 'solved' && !this.#restless) this.#take(solved);
+    async (/** @type {Kept} */ { typed, place }) => ({
+      drawn: await ask({ ask: 'draw', check: this.#check(), typed, place }, 'solved', 'overtaken'),
+      typed,
+    }),
+    ({ drawn, typed }) => {
+      // What was drawn for an older form is of no use to the one that stands here now.
+      if (drawn.reply === 'solved' && typed === this.#form.typed) this.#take(drawn);
     },
     (error) => this.#say(error),
   );
   /** Waits for a pause in typing before draws are asked for. */
   #pause = 0;
-  /** What is typed has changed and is not worked out yet. */
-  #restless = false;
   #keeper = new Keeper((/** @type {Kept} */ kept) => this.#keep(kept));
 
   async load() {
@@ -108,7 +105,6 @@ export class Check extends Screen {
     this.#refused = null;
     this.render();
     const now = { typed: this.#form.typed, place: this.#place };
-    this.#restless = true;
     clearTimeout(this.#pause);
     this.#solver.ask(now);
     if (this.#draft || differs(now.typed, this.#first)) this.#keeper.touch(now);

@@ -2,11 +2,12 @@
 // statement comes to is worked out while one types.
 
 import { ask, Fault } from '../api.js';
-import { h } from '../lib/dom.js';
+import { find, h } from '../lib/dom.js';
 import { icon } from '../lib/icons.js';
 import { Latest } from '../lib/latest.js';
 import { notice } from '../lib/notice.js';
 import { button, goBack, link, Screen } from '../lib/screen.js';
+import { whenReleased } from '../lib/typing.js';
 import { entryField } from '../parts/entry-field.js';
 import { noteView } from '../parts/note.js';
 import { choose } from '../parts/requirements.js';
@@ -18,8 +19,10 @@ export class Instrument extends Screen {
   #typed = {};
   /** @type {{ field: string | null, message: string } | null} */
   #fault = null;
-  /** Errors are said once one tries to save. */
+  /** One has tried to keep it: what is blank and wanted is said from now on. */
   #tried = false;
+  /** @type {string | null} The field being typed in: nothing new is complained about until it is left. */
+  #typing = null;
   #asker = new Latest(
     (/** @type {Desk.TypedInstrument} */ typed) =>
       ask({ ask: 'instrument_form', instrument: this.route.instrument ?? null, typed }, 'instrument_form'),
@@ -40,6 +43,19 @@ export class Instrument extends Screen {
       'instrument_form',
     );
     this.#typed = this.#form.typed;
+  }
+
+  connectedCallback() {
+    super.connectedCallback();
+    const left = () => {
+      if (this.#typing === null) return;
+      // What is inserted above a button while a finger is on it would push it away from under it.
+      whenReleased(() => {
+        this.#typing = null;
+        this.render();
+      });
+    };
+    this.addEventListener('focusout', left, { signal: this.gone });
   }
 
   async leave() {
@@ -89,7 +105,9 @@ export class Instrument extends Screen {
         field: error instanceof Fault ? error.field : null,
         message: /** @type {Error} */ (error).message,
       };
+      this.#typing = null;
       this.render();
+      if (this.#fault.field) find(this, `#${elementId(this.#fault.field)}`)?.focus();
     }
   }
 
@@ -101,10 +119,15 @@ export class Instrument extends Screen {
     });
   }
 
-  /** What is wrong with a field, once one has tried to save. @param {string} field */
-  #wrong(field) {
+  /**
+   * What is wrong with a field: while it is typed in nothing, and of a blank one nothing until one tries to keep it.
+   * @param {string} field
+   * @param {string} value
+   */
+  #wrong(field, value) {
+    if (this.#typing === field) return null;
     if (this.#fault?.field === field) return this.#fault.message;
-    if (!this.#tried) return null;
+    if (value.trim() === '' && !this.#tried) return null;
     return this.#form?.errors.find((error) => error.field === field)?.says ?? null;
   }
 
@@ -117,11 +140,14 @@ export class Instrument extends Screen {
    */
   #entry(field, label, value, input, how = {}) {
     return entryField({
-      id: field.replace(/\W+/g, '-'),
+      id: elementId(field),
       label,
       value,
-      input,
-      error: this.#wrong(field),
+      input: (text) => {
+        this.#typing = field;
+        input(text);
+      },
+      error: this.#wrong(field, value),
       ...(how.help ? { help: how.help } : {}),
       ...(how.number ? { number: true } : {}),
       ...(how.long ? { long: true } : {}),
@@ -134,7 +160,8 @@ export class Instrument extends Screen {
     if (!form) return null;
     const typed = this.#typed;
     const probes = typed.probes ?? [];
-    const apart = this.#fault && !this.#fault.field ? this.#fault.message : null;
+    const fault = this.#fault;
+    const apart = fault && !(fault.field && find(this, `#${elementId(fault.field)}`)) ? fault.message : null;
     return this.frame(
       {
         title: form.instrument ? (form.typed.name ?? '') || 'Instrument' : 'New instrument',
@@ -166,6 +193,10 @@ export class Instrument extends Screen {
             }),
           'plus',
         ),
+      ),
+      h(
+        'div',
+        { class: 'acts', key: 'use' },
         form.instrument &&
           link(form.withdrawn ? 'Bring it back into use' : 'Take it out of use', () => this.#withdraw(!form.withdrawn)),
       ),
@@ -183,13 +214,20 @@ export class Instrument extends Screen {
     const place = `probes.${at}`;
     const id = `probe-${at}`;
     const name = probe.name?.trim() || form.quantities.find((one) => one.value === probe.quantity)?.label || '';
+    const unitWrong = this.#wrong(`${place}.unit`, probe.unit ?? '');
+    const coverage = form.coverages.find((one) => one.value === (probe.coverage || 'limits'));
     return h(
       'section',
       { class: 'sec', key: id, 'aria-labelledby': id },
       h('div', { class: 'sec-head' }, h('h2', { id }, count > 1 ? `Probe ${at + 1}: ${name}` : 'What it reads')),
       h(
+        'p',
+        { class: 'comes-to', 'aria-live': 'polite' },
+        around?.comes_to ? `Comes to ${around.comes_to}` : 'Its ± is not known yet',
+      ),
+      h(
         'div',
-        { class: 'pair' },
+        { class: 'pair tight' },
         this.#entry(`${place}.name`, 'Called', probe.name ?? '', (text) => this.#probe(at, { name: text })),
         h(
           'div',
@@ -206,7 +244,7 @@ export class Instrument extends Screen {
         h(
           'div',
           { class: 'field' },
-          h('div', { class: 'field-top' }, h('label', { for: `${id}-unit` }, 'Its accuracy is stated in')),
+          h('div', { class: 'field-top' }, h('label', { for: elementId(`${place}.unit`) }, 'Accuracy is stated in')),
           choose(
             '',
             probe.unit ?? '',
@@ -215,9 +253,9 @@ export class Instrument extends Screen {
               ...(around?.units ?? []).map((one) => ({ value: one.id, label: one.symbol || one.name })),
             ],
             (unit) => this.#probe(at, { unit }),
-            `${id}-unit`,
+            elementId(`${place}.unit`),
           ),
-          this.#wrong(`${place}.unit`) && h('p', { class: 'wrong-words' }, this.#wrong(`${place}.unit`)),
+          unitWrong && h('p', { class: 'ask wrong-words' }, unitWrong),
         ),
         h(
           'div',
@@ -230,13 +268,9 @@ export class Instrument extends Screen {
             (coverage) => this.#probe(at, { coverage }),
             `${id}-coverage`,
           ),
-          h(
-            'p',
-            { class: 'ask' },
-            form.coverages.find((one) => one.value === (probe.coverage || 'limits'))?.help ?? '',
-          ),
         ),
       ),
+      coverage?.help && h('p', { class: 'ask' }, `${coverage.label}. ${coverage.help}.`),
       (probe.bands ?? []).map((band, index) => this.#bandView(probe, band, at, index, around?.unit ?? '')),
       h(
         'div',
@@ -247,12 +281,17 @@ export class Instrument extends Screen {
       ),
       h(
         'div',
-        { class: 'pair' },
-        this.#entry(`${place}.range`, 'Range', probe.range ?? '', (range) => this.#probe(at, { range }), {
-          number: true,
-          unit: around?.unit ?? '',
-          help: 'The upper end; wanted where the paper gives % of range',
-        }),
+        { class: 'pair tight' },
+        this.#entry(
+          `${place}.range`,
+          'Upper end of its range',
+          probe.range ?? '',
+          (range) => this.#probe(at, { range }),
+          {
+            number: true,
+            unit: around?.unit ?? '',
+          },
+        ),
         this.#entry(
           `${place}.resolution`,
           'Step of the display',
@@ -268,7 +307,7 @@ export class Instrument extends Screen {
           'Part that is calibration',
           probe.calibration_share ?? '',
           (calibration_share) => this.#probe(at, { calibration_share }),
-          { number: true, unit: '%', help: 'The same at each reading, so it cancels in a difference; 80 where blank' },
+          { number: true, unit: '%' },
         ),
         this.#entry(
           `${place}.response`,
@@ -280,21 +319,33 @@ export class Instrument extends Screen {
             unit: 's',
           },
         ),
-        this.#entry(`${place}.serial`, 'Serial number of the probe', probe.serial ?? '', (serial) =>
-          this.#probe(at, { serial }),
-        ),
+      ),
+      h(
+        'p',
+        { class: 'ask' },
+        'The part that is calibration is the same at each reading of this probe, so it cancels in a difference; 80 % where blank. The range is wanted where the paper gives % of range.',
+      ),
+      h(
+        'div',
+        { class: 'pair tight' },
         this.#entry(
           `${place}.calibrated`,
           'Calibrated on',
           probe.calibrated ?? '',
           (calibrated) => this.#probe(at, { calibrated }),
-          {
-            help: 'As 2026-03-01',
-          },
+          { help: 'As 2026-03-01' },
         ),
         this.#entry(`${place}.due`, 'Due again on', probe.due ?? '', (due) => this.#probe(at, { due }), {
           help: 'As 2027-03-01',
         }),
+      ),
+      h(
+        'div',
+        { class: 'pair' },
+        count > 1 &&
+          this.#entry(`${place}.serial`, 'Serial number of the probe', probe.serial ?? '', (serial) =>
+            this.#probe(at, { serial }),
+          ),
         (around?.reads ?? []).map((way) =>
           h(
             'div',
@@ -311,7 +362,6 @@ export class Instrument extends Screen {
           ),
         ),
       ),
-      around?.comes_to && h('p', { class: 'section-readout', 'aria-live': 'polite' }, around.comes_to),
       count > 1 &&
         h(
           'div',
@@ -351,7 +401,7 @@ export class Instrument extends Screen {
       h('legend', null, many ? `Band ${index + 1}` : 'Accuracy, ±'),
       h(
         'div',
-        { class: 'pair' },
+        { class: 'pair tight' },
         many && !last && field('up_to', 'Up to a reading of', unit),
         field('absolute', 'Fixed part', unit),
         field('of_reading', 'Of the reading', '%'),
@@ -372,4 +422,12 @@ export class Instrument extends Screen {
       ),
     );
   }
+}
+
+/**
+ * An element's id made of a field's place such as `probes.0.unit`.
+ * @param {string} field
+ */
+function elementId(field) {
+  return field.replace(/\W+/g, '-');
 }

@@ -2,6 +2,7 @@
 
 import { ask } from '../api.js';
 import { h } from '../lib/dom.js';
+import { icon } from '../lib/icons.js';
 import { address } from '../lib/route.js';
 import { button, go, Screen } from '../lib/screen.js';
 import { openSheet } from '../lib/sheet.js';
@@ -45,7 +46,8 @@ export class Instruments extends Screen {
         key: one.instrument,
         href: address(['instrument', one.instrument]),
         title: one.name,
-        says: [one.says, one.due].filter(Boolean).join('. '),
+        says: [one.says, one.due && [h('br'), h(one.overdue ? 'strong' : 'span', null, one.due)]],
+        hang: one.overdue && icon('odd'),
         invented: one.invented,
       });
     const used = register.instruments.filter((one) => !one.withdrawn);

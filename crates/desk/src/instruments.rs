@@ -96,7 +96,7 @@ fn row(at: &Asked<'_>, head: &Head) -> InstrumentRow {
     InstrumentRow {
         instrument: head.record.to_string(),
         name: head.body.title.clone(),
-        says: says.join(": "),
+        says: capital(&says.join(": ")),
         due,
         overdue,
         withdrawn: head.withdrawn,
