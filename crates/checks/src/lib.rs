@@ -27,6 +27,7 @@ pub mod water_state;
 pub mod air_heat;
 pub mod air_state;
 pub mod book_constants;
+pub mod coil;
 pub mod condensate;
 pub mod fan_heat;
 pub mod heat_rise;
@@ -51,6 +52,7 @@ pub static ALL: &[&dyn Check] = &[
     &book_constants::BookConstants,
     &mixing::Mixing,
     &outdoor_share::OutdoorShare,
+    &coil::Coil,
     &condensate::Condensate,
     &recovery::Recovery,
     &humidifying::Humidifying,

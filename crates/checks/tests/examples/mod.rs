@@ -100,6 +100,16 @@ fn example(id: &str) -> Option<Example> {
                 ("co2.mixed", Kind::MoleFraction, "818 ppm", "20 ppm of analyser"),
             ],
         },
+        "coil" => Example {
+            choices: &[("pressure.by", "elevation")],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "50 m", ""),
+                ("entering.dry_bulb", T, "26.7 C", "0.1 K of dry"),
+                ("entering.wet_bulb", T, "20.4 C", "0.1 K of wet"),
+                ("leaving.dry_bulb", T, "12.8 C", "0.1 K of dry"),
+                ("leaving.wet_bulb", T, "11.9 C", "0.1 K of wet"),
+            ],
+        },
         "recovery" => Example {
             choices: &[
                 ("pressure.by", "read"),
