@@ -4,6 +4,7 @@ import json
 import sys
 
 import coil
+import economizer
 import fan_heat
 import heat_rise
 import humidifying
@@ -115,7 +116,7 @@ CASES = [
     condensate("drain at 84 kPa", (26.5, "relative_humidity", 0.52), (12.5, "relative_humidity", 0.94), 84_000, 1.9, 3.5, 900.0, 13.0),
 ]
 
-for more in (outdoor_share, coil, recovery, humidifying, heat_rise, fan_heat, surface):
+for more in (outdoor_share, coil, recovery, humidifying, heat_rise, fan_heat, surface, economizer):
     CASES += more.CASES
 
 json.dump({"note": "CoolProp alone; [value in SI, relative tolerance, absolute tolerance].", "cases": CASES}, sys.stdout, indent=1)

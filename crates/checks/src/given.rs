@@ -36,6 +36,7 @@ pub struct Given {
     floors: BTreeMap<String, f64>,
     kept: BTreeMap<String, f64>,
     drawing: bool,
+    moved: bool,
 }
 
 impl Given {
@@ -211,6 +212,12 @@ impl Given {
         self.drawing = true;
     }
 
+    /// Whether it is solved only for how far its results move: curves and tables are not looked at then.
+    #[must_use]
+    pub fn is_moved(&self) -> bool {
+        self.moved
+    }
+
     /// Whether it is drawn around the readings.
     #[must_use]
     pub fn is_drawn(&self) -> bool {
@@ -221,6 +228,7 @@ impl Given {
     #[must_use]
     pub fn moved(&self, moves: &[(Moved, f64)]) -> Self {
         let mut other = self.clone();
+        other.moved = true;
         for (what, by) in moves {
             match what {
                 Moved::Reading(key) => {

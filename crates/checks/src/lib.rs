@@ -29,6 +29,7 @@ pub mod air_state;
 pub mod book_constants;
 pub mod coil;
 pub mod condensate;
+pub mod economizer;
 pub mod fan_heat;
 pub mod heat_rise;
 pub mod humidifying;
@@ -59,6 +60,7 @@ pub static ALL: &[&dyn Check] = &[
     &heat_rise::HeatRise,
     &fan_heat::FanHeat,
     &surface::Surface,
+    &economizer::Economizer,
 ];
 
 /// The check with this identifier.

@@ -110,6 +110,24 @@ fn example(id: &str) -> Option<Example> {
                 ("leaving.wet_bulb", T, "11.9 C", "0.1 K of wet"),
             ],
         },
+        "economizer" => Example {
+            choices: &[
+                ("pressure.by", "elevation"),
+                ("return.humidity_by", "relative_humidity"),
+                ("outdoor.humidity_by", "relative_humidity"),
+                ("flow.basis", "dry_air"),
+            ],
+            readings: &[
+                ("pressure.elevation", Kind::Elevation, "50 m", ""),
+                ("return.dry_bulb", T, "24.5 C", "0.3 K of stem"),
+                ("return.relative_humidity", Kind::RelativeHumidity, "50 %", "2 % of probe"),
+                ("outdoor.dry_bulb", T, "32.0 C", "0.3 K of stem"),
+                ("outdoor.relative_humidity", Kind::RelativeHumidity, "55 %", "2 % of probe"),
+                ("flow.dry_air", Kind::DryAirFlow, "5 kg/s", "4 %"),
+                ("damper.least", Kind::Share, "20 %", "2 %"),
+                ("coil.leaving", T, "13.0 C", "0.3 K"),
+            ],
+        },
         "recovery" => Example {
             choices: &[
                 ("pressure.by", "read"),
