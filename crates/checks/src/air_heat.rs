@@ -18,6 +18,7 @@ use dewledger_quantities::{
 use crate::book_constants;
 use crate::check::{About, Check, Group};
 use crate::doubt::Doubt;
+use crate::drawn::{Line, LineKind};
 use crate::flow_block::{Flow, FlowBlock, STANDARD_DENSITY_IP, STANDARD_DENSITY_SI};
 use crate::form::{Mark, Section};
 use crate::given::Given;
@@ -295,6 +296,11 @@ pub(crate) fn finish(readings: Readings, outcome: &mut Outcome) {
     };
     outcome.states.push(point("entering", "Entering air", Mark::ENTERING, readings.entering.air));
     outcome.states.push(point("leaving", "Leaving air", Mark::LEAVING, readings.leaving.air));
+    outcome.lines.push(Line {
+        from: readings.entering.air,
+        to: readings.leaving.air,
+        kind: LineKind::Process,
+    });
     outcome.pressure = Some(
         Sentence::new("{0}, {s0}")
             .with(readings.here.pressure.amount())

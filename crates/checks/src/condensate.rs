@@ -24,6 +24,7 @@ use season::{bin_sections, seasons};
 
 use crate::check::{About, Check, Group};
 use crate::doubt::Doubt;
+use crate::drawn::{Line, LineKind};
 use crate::flow_block::Flow;
 use crate::form::{Mark, ReadingItem, Section};
 use crate::given::Given;
@@ -388,6 +389,7 @@ fn headline(outcome: &mut Outcome) {
 }
 
 fn finish(here: &pressure::Here, entering: Read, leaving: Read, outcome: &mut Outcome) {
+    outcome.lines.push(Line { from: entering.air, to: leaving.air, kind: LineKind::Process });
     for (point, label, mark, read) in [
         (ENTERING, "Entering air", Mark::ENTERING, entering),
         (LEAVING, "Leaving air", Mark::LEAVING, leaving),

@@ -8,6 +8,7 @@
 mod combine;
 mod draws;
 mod first_order;
+mod states;
 mod term;
 
 use std::collections::BTreeMap;
@@ -15,6 +16,7 @@ use std::collections::BTreeMap;
 pub use combine::{Combined, combine, quantile};
 pub use draws::{DRAWS, Drawn, Interval, SEED, draw};
 pub use first_order::terms;
+pub use states::StateDoubt;
 pub use term::Term;
 
 use crate::check::Check;
@@ -57,6 +59,8 @@ pub struct Worked {
     pub outcome: Outcome,
     /// Doubt by key of the result.
     pub doubts: BTreeMap<String, Doubt>,
+    /// Doubt by key of the air state.
+    pub state_doubts: BTreeMap<String, StateDoubt>,
     /// What was given, with what is resolved by the known doubt.
     pub informed: Given,
 }
@@ -75,7 +79,7 @@ pub fn work_out(check: &dyn Check, given: &Given) -> Result<Worked, Stop> {
     let first = first?;
     let mut informed = given.clone();
     informed.keep(&first.kept);
-    let doubts = first_order::doubts(check, &informed, &first);
+    let (doubts, state_doubts) = first_order::doubts(check, &informed, &first);
     // With the doubt known, a difference counts as resolved by that doubt instead of the floor for unstated ±.
     for (key, doubt) in &doubts {
         if doubt.unknown.is_empty() && doubt.u_si > 0.0 {
@@ -88,7 +92,7 @@ pub fn work_out(check: &dyn Check, given: &Given) -> Result<Worked, Stop> {
     let notes: Vec<Note> = check.judge(&informed, &outcome, &doubts);
     outcome.notes.extend(notes);
     outcome.notes.sort_by_key(|note| note.weight);
-    Ok(Worked { outcome, doubts, informed })
+    Ok(Worked { outcome, doubts, state_doubts, informed })
 }
 
 impl Worked {

@@ -12,6 +12,7 @@ use dewledger_quantities::{
 };
 
 use crate::check::{About, Check, Group};
+use crate::drawn::{Line, LineKind};
 use crate::flow_block::{Flow, FlowBlock};
 use crate::form::{Mark, ReadingItem, Repeat, Section, count};
 use crate::given::Given;
@@ -234,10 +235,28 @@ impl Check for Mixing {
             mark: Some(Mark::MIXED),
             air: results.air,
         });
+        outcome.lines = lines(&streams, &results);
         outcome.pressure =
             Some(Sentence::new("{0}, {s0}").with(here.pressure.amount()).nested(here.source));
         Ok(outcome)
     }
+}
+
+/// The line between two streams, or from each of several to the mixture; and, where there is fog, from the mixture as it
+/// would be with all its water as vapour to the air that is left of it.
+fn lines(streams: &[Stream], results: &Results) -> Vec<Line> {
+    let clear =
+        MoistAir::unchecked_from_enthalpy(results.enthalpy, results.water, results.air.pressure())
+            .unwrap_or(results.air);
+    let mixing = |from: MoistAir, to: MoistAir| Line { from, to, kind: LineKind::Mixing };
+    let mut lines: Vec<Line> = match streams {
+        [one, other] => vec![mixing(one.air, other.air)],
+        several => several.iter().map(|stream| mixing(stream.air, clear)).collect(),
+    };
+    if results.liquid.si() + results.ice.si() > 0.0 {
+        lines.push(Line { from: clear, to: results.air, kind: LineKind::Process });
+    }
+    lines
 }
 
 const DUCT_LABELS: [&str; MOST] = [

@@ -228,3 +228,40 @@ fn draws_beyond_saturation_are_saturated_air() {
     assert!((drawn.saturated - 0.28).abs() < 0.01, "{}", drawn.saturated);
     assert!(drawn.impossible < 1e-9 && drawn.intervals.contains_key("humidity_ratio"));
 }
+
+/// A state's dry bulb and humidity ratio err together. Source: central differences of CoolProp 8.0.0 `HAPropsSI` over the
+/// standard uncertainties (± 0.2 K, ± 3 % relative humidity at 25 °C, 50 %; ± 0.2 K both at 25 °C and wet bulb 18 °C).
+#[test]
+fn the_doubt_of_a_state_has_a_tilt() {
+    let check = find("air_state").unwrap();
+    let given = |by: &str, kind, value: f64, width: f64| {
+        let mut given = Given::default();
+        given.choose("pressure.by", "read");
+        put(&mut given, "pressure.read", Kind::Pressure, 101_325.0);
+        put(&mut given, "air.dry_bulb", Kind::Temperature, 298.15);
+        given.choose("air.humidity_by", by);
+        put(&mut given, &format!("air.{by}"), kind, value);
+        given
+            .within("air.dry_bulb", 0.2)
+            .within(&format!("air.{by}"), width)
+            .within("pressure.read", 0.0)
+    };
+    let humid = given("relative_humidity", Kind::RelativeHumidity, 0.5, 0.03);
+    let worked = work_out(check, &humid).unwrap();
+    let doubt = worked.state_doubts["air"];
+    near(doubt.dry_bulb_k.unwrap(), 0.2 / 1.96, 1e-3);
+    near(doubt.humidity_ratio_kg_kg.unwrap(), 0.000_314_745, 2e-3);
+    near(doubt.correlation, 0.194_979, 2e-3);
+
+    let wet = given("wet_bulb", Kind::Temperature, 291.15, 0.2);
+    let doubt = work_out(check, &wet).unwrap().state_doubts["air"];
+    near(doubt.humidity_ratio_kg_kg.unwrap(), 0.000_133_650, 2e-3);
+    near(doubt.correlation, -0.316_913, 2e-3);
+
+    // Without a ± of the humidity only the dry bulb's is known.
+    let mut half = given("wet_bulb", Kind::Temperature, 291.15, 0.2);
+    put(&mut half, "air.wet_bulb", Kind::Temperature, 291.15);
+    let doubt = work_out(check, &half).unwrap().state_doubts["air"];
+    assert!(doubt.dry_bulb_k.is_some() && doubt.humidity_ratio_kg_kg.is_none());
+    assert!(doubt.correlation == 0.0);
+}

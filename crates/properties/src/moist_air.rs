@@ -132,6 +132,24 @@ impl MoistAir {
         Ok(Self::at(t, pressure.si(), z, w.si()))
     }
 
+    /// Air of this enthalpy and humidity ratio, all its water as vapour, without asking whether it can hold it: where a
+    /// mixture would lie before it turns to fog.
+    ///
+    /// # Errors
+    ///
+    /// [`AirError::PressureOutOfRange`], or [`AirError::TemperatureOutOfRange`] where the temperature is outside −60 to
+    /// 90 °C.
+    pub fn unchecked_from_enthalpy(
+        h: Enthalpy,
+        w: HumidityRatio,
+        pressure: Pressure,
+    ) -> Result<MoistAir, AirError> {
+        in_pressure_range(pressure)?;
+        let t = ThermodynamicTemperature::from_si(temperature_of(h.si(), w.si(), pressure.si())?);
+        in_temperature_range(t)?;
+        Ok(Self::unchecked(t, w, pressure))
+    }
+
     fn at(t: f64, p: f64, z: f64, w: f64) -> MoistAir {
         let mixed = mixture(&fitted::lanes(t), t, p, w);
         MoistAir { t, p, z, w, h: mixed.enthalpy, v: mixed.volume }

@@ -28,7 +28,7 @@ pub use quantity::{
 };
 pub use read::{Entry, ReadError, Typed, read};
 pub use sentence::Sentence;
-pub use show::{Shown, plain, show, show_with};
+pub use show::{Shown, plain, show, show_to, show_with};
 pub use unit::Unit;
 pub use uom::si::f64::{
     Area, ElectricCurrent, ElectricPotential, Energy, HeatFluxDensity, HeatTransfer, Length,

@@ -45,6 +45,13 @@ pub fn show(amount: Amount, unit: &'static Unit) -> Shown {
     Shown { number: number(value, decimals(amount.kind(), unit, value)), unit }
 }
 
+/// Shows a value to a fixed number of decimals: the numbers along an axis, which all have the place of their step.
+#[must_use]
+pub fn show_to(amount: Amount, decimals: u8, unit: &'static Unit) -> Shown {
+    let value = unit.from_si(amount.kind(), amount.si()).unwrap_or(f64::NAN);
+    Shown { number: number(value, i32::from(decimals)), unit }
+}
+
 /// Shows a value with the half-width of its interval, both rounded to two digits of the half-width. The half-width
 /// converts as a difference, without the scale's zero. Without one (zero, negative or not a number) the second text is
 /// "not known", never ± 0.
@@ -219,6 +226,18 @@ mod tests {
         for (kind, si, id, text) in cases {
             assert_eq!(show(Amount::new(kind, si), unit(id)).text(), text);
         }
+    }
+
+    #[test]
+    fn numbers_along_an_axis_have_the_place_of_their_step() {
+        let at =
+            |si, decimals| show_to(Amount::new(Kind::HumidityRatio, si), decimals, unit("g/kg"));
+        assert_eq!(at(0.012, 0).text(), "12\u{a0}g/kg");
+        assert_eq!(at(0.0005, 1).number, "0.5");
+        let below = Amount::new(Kind::Temperature, 253.15);
+        assert_eq!(show_to(below, 0, unit("degC")).number, "−20");
+        // A tick at zero that rounding left a hair below it.
+        assert_eq!(show_to(Amount::new(Kind::HumidityRatio, -1e-18), 0, unit("g/kg")).number, "0");
     }
 
     #[test]
