@@ -7,7 +7,8 @@ use std::process::ExitCode;
 
 use clap::ValueEnum;
 use dewledger_desk::{
-    Desk, FieldView, Place, Preset, Reply, Request, Solved, Stage, Typed, TypedReading, TypedValue,
+    Desk, FieldView, Place, Preset, Reply, Request, Solved, Stage, Typed, TypedReading,
+    TypedRequirement, TypedValue,
 };
 
 use crate::clock;
@@ -26,6 +27,7 @@ pub(crate) enum Units {
 pub(crate) struct One {
     pub(crate) check: String,
     pub(crate) fields: Vec<String>,
+    pub(crate) requirements: Vec<String>,
     pub(crate) units: Units,
     pub(crate) working: bool,
     pub(crate) ledger: Option<PathBuf>,
@@ -137,16 +139,58 @@ fn typed(fields: &[String]) -> Result<Typed, String> {
     Ok(typed)
 }
 
+/// A requirement in words: "total at least 48 kW", "latent between 9 and 10 kW", "share within 20 % +- 5 %".
+fn requirement(words: &str) -> Result<TypedRequirement, String> {
+    let bad = || {
+        format!(
+            "“{words}” is no requirement: write \"total at least 48 kW\", \"at most\", \"between 40 and 50 kW\" or \"within 50 kW +- 5 %\""
+        )
+    };
+    let (figure, rest) = words.trim().split_once(' ').ok_or_else(bad)?;
+    let value = |text: &str| TypedValue { text: text.trim().to_owned(), unit: None };
+    let (direction, value, other) = if let Some(limit) = rest.strip_prefix("at least ") {
+        ("at_least", value(limit), TypedValue::default())
+    } else if let Some(limit) = rest.strip_prefix("at most ") {
+        ("at_most", value(limit), TypedValue::default())
+    } else if let Some((low, high)) =
+        rest.strip_prefix("between ").and_then(|rest| rest.split_once(" and "))
+    {
+        // "40 and 50 kW": the unit behind the second counts for both.
+        let unit = high.trim_start_matches(|c: char| c.is_ascii_digit() || " .,-−+".contains(c));
+        let bare = low.trim().ends_with(|c: char| c.is_ascii_digit());
+        let low = if bare { format!("{} {unit}", low.trim()) } else { low.to_owned() };
+        ("between", value(&low), value(high))
+    } else {
+        let within = rest.strip_prefix("within ").ok_or_else(bad)?;
+        let (nominal, tolerance) =
+            within.split_once('±').or_else(|| within.split_once("+-")).ok_or_else(bad)?;
+        ("within", value(nominal), value(tolerance))
+    };
+    Ok(TypedRequirement {
+        figure: figure.to_owned(),
+        direction: direction.to_owned(),
+        value,
+        other,
+        ..TypedRequirement::default()
+    })
+}
+
 /// Works out one check and prints it for a person.
 pub(crate) fn one(asked: &One) -> ExitCode {
     let opened = match open(asked.ledger.as_deref()) {
         Ok(opened) => opened,
         Err(says) => return fail(&says),
     };
-    let typed = match typed(&asked.fields) {
+    let mut typed = match typed(&asked.fields) {
         Ok(typed) => typed,
         Err(says) => return fail(&says),
     };
+    for asked in &asked.requirements {
+        match requirement(asked) {
+            Ok(requirement) => typed.requirements.push(requirement),
+            Err(says) => return fail(&says),
+        }
+    }
     // In a named ledger the person's own units stand; a throw-away one is told which.
     if asked.ledger.is_none() {
         let preset = if asked.units == Units::Ip { Preset::Ip } else { Preset::Si };
@@ -154,7 +198,8 @@ pub(crate) fn one(asked: &One) -> ExitCode {
             return fail(&fault.message);
         }
     }
-    let request = Request::Solve { check: asked.check.clone(), typed, place: Place::default() };
+    // Nobody types on meanwhile: results that want draws get them at once.
+    let request = Request::Draw { check: asked.check.clone(), typed, place: Place::default() };
     let solved = match opened.desk.handle(request) {
         Ok(Reply::Solved(solved)) => solved,
         Ok(_) => return fail("the desk answered another question"),

@@ -51,6 +51,12 @@ enum Command {
             help = "Readings and choices, as entering.dry_bulb=\"80 F ± 0.5\" or flow.basis=standard"
         )]
         fields: Vec<String>,
+        #[arg(
+            long = "require",
+            value_name = "REQUIREMENT",
+            help = "Holds a result against a requirement, as \"total at least 48 kW\"; may be given more than once"
+        )]
+        requirements: Vec<String>,
         /// Units of the answer.
         #[arg(long, value_enum, default_value_t = check::Units::Si)]
         units: check::Units,
@@ -105,9 +111,9 @@ fn main() -> ExitCode {
         Command::Air { columns } => air::run(&columns),
         Command::Check { list: true, .. } => check::list(),
         Command::Check { check: None, ledger, .. } => check::answer_lines(ledger.as_deref()),
-        Command::Check { check: Some(check), fields, units, working, ledger, .. } => {
-            check::one(&check::One { check, fields, units, working, ledger })
-        }
+        Command::Check {
+            check: Some(check), fields, requirements, units, working, ledger, ..
+        } => check::one(&check::One { check, fields, requirements, units, working, ledger }),
         Command::Serve { port, ledger } => serve::run(port, ledger),
     }
 }

@@ -86,6 +86,7 @@ pub(crate) fn answer(solved: &Solved, working: bool) -> String {
     } else if let Some(why) = &headline.why_not {
         line(&mut text, &format!("\n{}: – ({why})", headline.says));
     }
+    verdicts(&mut text, solved);
     for group in &solved.groups {
         let aside = group.aside.as_ref().map(|aside| format!("  ({aside})")).unwrap_or_default();
         line(&mut text, &format!("\n{}{aside}", group.title));
@@ -135,6 +136,25 @@ pub(crate) fn answer(solved: &Solved, working: bool) -> String {
         line(&mut text, &format!("  {}. {}", caution.title, caution.says));
     }
     text
+}
+
+/// Requirements and their answers.
+fn verdicts(text: &mut String, solved: &Solved) {
+    let verdicts = &solved.requirements.verdicts;
+    if !verdicts.is_empty() {
+        line(text, "\nRequirements");
+    }
+    for verdict in verdicts {
+        let word = verdict.word.as_deref().unwrap_or("No answer");
+        line(text, &format!("  {}: {word}", verdict.asked));
+        let chance = verdict.chance.iter().map(|chance| format!("{chance}."));
+        let why = verdict.why_not.iter().map(|why| why.says.clone());
+        let errors = verdict.errors.iter().map(|error| error.says.clone());
+        let all = verdict.says.iter().cloned().chain(chance).chain(verdict.decides.iter().cloned());
+        for says in all.chain(verdict.share.iter().cloned()).chain(why).chain(errors) {
+            line(text, &format!("    {says}"));
+        }
+    }
 }
 
 fn say_row(text: &mut String, row: &ResultRow) {

@@ -262,3 +262,28 @@ fn the_server_listens_on_this_machine_only() {
     // The address of every interface would answer here too; the loopback of another number does not.
     assert!(TcpStream::connect(("127.0.0.2", served.port)).is_err());
 }
+
+#[test]
+fn a_requirement_is_held_against_a_result() {
+    let output = Command::new(env!("CARGO_BIN_EXE_dewledger"))
+        .args(["check", "air_state", "pressure.by=read", "pressure.read=101.325 kPa ± 0.3 kPa"])
+        .args(["air.dry_bulb=24 C ± 0.3", "air.wet_bulb=17 C ± 0.3"])
+        .args(["--require", "dry_bulb at least 20 C", "--require", "humidity_ratio at most 8 g/kg"])
+        .output()
+        .unwrap();
+    let said = String::from_utf8(output.stdout).unwrap();
+    assert!(said.contains("at most 8.00\u{a0}g/kg: Goes over"), "{said}");
+    assert!(said.contains("It waits for the result that it is about."), "{said}");
+    let output = Command::new(env!("CARGO_BIN_EXE_dewledger"))
+        .args([
+            "check",
+            "air_state",
+            "--require",
+            "humidity_ratio around 8 g/kg",
+            "air.dry_bulb=24 C",
+        ])
+        .output()
+        .unwrap();
+    let said = String::from_utf8(output.stderr).unwrap();
+    assert!(said.contains("is no requirement"), "{said}");
+}

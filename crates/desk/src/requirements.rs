@@ -55,6 +55,8 @@ struct ReadRequirement {
     own_si: Option<f64>,
     /// The figure that a share is taken of.
     nominal_si: f64,
+    /// It was stated as a figure with a tolerance, not as two limits.
+    nominal: bool,
     words: Sentence,
 }
 
@@ -267,7 +269,8 @@ fn read_requirement(
         ("at_most", ..) => (Asked::AtMost(first.si()), words("{w0}: at most {0}").with(first)),
         _ => (Asked::AtLeast(first.si()), words("{w0}: at least {0}").with(first)),
     };
-    Ok(ReadRequirement { asked, risk, own_si, nominal_si: first.si(), words })
+    let nominal = typed.direction == "within";
+    Ok(ReadRequirement { asked, risk, own_si, nominal_si: first.si(), nominal, words })
 }
 
 fn unit(kind: Kind, typed: &TypedValue, units: &UnitChoice) -> &'static Unit {
@@ -363,7 +366,8 @@ fn share(
     kind: Kind,
     like_for_like: bool,
 ) -> Option<Sentence> {
-    if kind != Kind::Power || requirement.nominal_si == 0.0 {
+    let band = matches!(requirement.asked, Asked::Between(..)) && !requirement.nominal;
+    if kind != Kind::Power || requirement.nominal_si == 0.0 || band {
         return None;
     }
     let nominal = Amount::new(kind, requirement.nominal_si);
@@ -465,7 +469,11 @@ pub(crate) fn view(index: usize, stored: &StoredVerdict, units: &UnitChoice) -> 
         let percent = Unit::find("%").map_or_else(String::new, |unit| {
             dewledger_quantities::show(Share::from_si(met).amount(), unit).text()
         });
-        format!("{percent} likely to be met")
+        match met {
+            met if met > 0.999 => "more than 99.9\u{a0}% likely to be met".to_owned(),
+            met if met < 0.001 => "less than 0.1\u{a0}% likely to be met".to_owned(),
+            _ => format!("{percent} likely to be met"),
+        }
     });
     VerdictView {
         index,
