@@ -25,6 +25,9 @@ const paths = {
   again: ['M19 8a8 8 0 1 0 1 6 M20 3v6h-6'],
   book: ['M3 4h7l2 2 2-2h7v15h-7l-2 2-2-2H3z M12 6v15'],
   tick: ['M4 13l5 5L20 6'],
+  // A limit and an arrow: one that does not reach up to it, one that goes beyond it.
+  short: ['M4 4h16 M12 21v-11 M7 15l5-5 5 5'],
+  over: ['M4 16h16 M12 22V4 M7 9l5-5 5 5'],
   pencil: ['M4 20l1-5L16 4l4 4L9 19z'],
   find: ['M10 4a6 6 0 1 0 0 12a6 6 0 0 0 0-12z M14.5 14.5L21 21'],
   close: ['M5 5l14 14 M19 5L5 19'],

@@ -4,6 +4,7 @@ import { h } from '../lib/dom.js';
 import { icon } from '../lib/icons.js';
 import { button, link } from '../lib/screen.js';
 import { openSheet, sheetActs } from '../lib/sheet.js';
+import { toNext } from '../lib/typing.js';
 import { noteView } from './note.js';
 
 /** @typedef {(requirement: Desk.TypedRequirement | null, index: number | null) => void} Put */
@@ -61,8 +62,8 @@ function verdictView(verdict, typed, view, put) {
 /** @param {string | null} answer */
 function sign(answer) {
   if (answer === 'meets') return 'tick';
-  if (answer === 'cannot_be_told' || answer === null) return 'odd';
-  return 'wrong';
+  if (answer === 'falls_short') return 'short';
+  return answer === 'goes_over' ? 'over' : 'odd';
 }
 
 /** @param {string} text */
@@ -83,6 +84,12 @@ async function ask(view, typed, index, put) {
   let now = typed ?? { figure: first.figure, direction: 'at_least', value: { text: '' }, source: '' };
   let rated = Object.keys(now.conditions ?? {}).length > 0;
   const errors = (index === null ? null : view.verdicts[index]?.errors) ?? [];
+  /** @param {string} field */
+  const wrong = (field) =>
+    errors.filter((error) => error.field === field).map((error) => h('p', { class: 'ask wrong-words' }, error.says));
+  // What stands at no field of the sheet.
+  const apart = errors.filter((error) => !/^(value|other|risk|plus_minus|conditions\..*)$/.test(error.field));
+  const folded = errors.some((error) => /^(risk|plus_minus|conditions\.)/.test(error.field));
   const done = await openSheet(
     'A requirement',
     (/** @type {import('../lib/sheet.js').Sheet<Desk.TypedRequirement>} */ sheet) => {
@@ -111,7 +118,9 @@ async function ask(view, typed, index, put) {
               id: `asked-${name}`,
               type: 'text',
               inputmode: 'decimal',
+              enterkeyhint: 'next',
               autocomplete: 'off',
+              onkeydown: toNext,
               value: now[name]?.text ?? '',
               oninput: (/** @type {Event} */ event) =>
                 set({ [name]: { text: textOf(event), unit: now[name]?.unit ?? unit.id } }, false),
@@ -123,7 +132,7 @@ async function ask(view, typed, index, put) {
               : h('span', { class: 'unit' }, unit.symbol),
           ),
           help && h('p', { class: 'ask' }, help),
-          errors.filter((error) => error.field === name).map((error) => h('p', { class: 'wrong-words' }, error.says)),
+          wrong(name),
         );
       return [
         h('p', { class: 'mute' }, 'There are no built-in limits. Type what is asked, and where that is written.'),
@@ -157,7 +166,7 @@ async function ask(view, typed, index, put) {
         words('Written in', 'asked-source', now.source ?? '', (text) => set({ source: text }, false)),
         h(
           'details',
-          { class: 'sec folded' },
+          { class: 'sec folded', open: folded },
           h('summary', null, h('h3', null, 'Conditions, risk, its own ±'), icon('down', 'i-s')),
           words(
             'Risk of a wrong “meets”, %',
@@ -166,6 +175,7 @@ async function ask(view, typed, index, put) {
             (text) => set({ risk: text }, false),
             '5 where blank',
           ),
+          wrong('risk'),
           number(
             '± of the requirement itself',
             'plus_minus',
@@ -196,7 +206,9 @@ async function ask(view, typed, index, put) {
                     id: `asked-${condition.key}`,
                     type: 'text',
                     inputmode: 'decimal',
+                    enterkeyhint: 'next',
                     autocomplete: 'off',
+                    onkeydown: toNext,
                     value: now.conditions?.[condition.key]?.text ?? '',
                     oninput: (/** @type {Event} */ event) =>
                       set(
@@ -214,14 +226,12 @@ async function ask(view, typed, index, put) {
                   }),
                   h('span', { class: 'unit' }, condition.unit.symbol),
                 ),
-                errors
-                  .filter((error) => error.field === `conditions.${condition.key}`)
-                  .map((error) => h('p', { class: 'wrong-words' }, error.says)),
+                wrong(`conditions.${condition.key}`),
               ),
             ),
         ),
-        errors.length > 0 &&
-          noteView({ id: 'asked-errors', tone: 'impossible', lead: errors.map((error) => error.says).join(' ') }),
+        apart.length > 0 &&
+          noteView({ id: 'asked-errors', tone: 'impossible', lead: apart.map((error) => error.says).join(' ') }),
         sheetActs(button('Hold it against this', () => sheet.close(now), { kind: 'go' })),
       ];
     },
@@ -257,7 +267,9 @@ function words(label, id, value, input, help) {
       h('input', {
         id,
         type: 'text',
+        enterkeyhint: 'next',
         autocomplete: 'off',
+        onkeydown: toNext,
         value,
         oninput: (/** @type {Event} */ event) => input(textOf(event)),
       }),

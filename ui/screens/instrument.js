@@ -277,7 +277,7 @@ export class Instrument extends Screen {
         { class: 'acts' },
         link('Another band', () => this.#probe(at, { bands: [...(probe.bands ?? []), {}] }), 'plus'),
         (probe.bands ?? []).length > 1 &&
-          link('Take the last band away', () => this.#probe(at, { bands: (probe.bands ?? []).slice(0, -1) }), 'close'),
+          link('Take the last band away', () => this.#probe(at, { bands: withoutLast(probe.bands ?? []) }), 'close'),
       ),
       h(
         'div',
@@ -402,7 +402,7 @@ export class Instrument extends Screen {
       h(
         'div',
         { class: 'pair tight' },
-        many && !last && field('up_to', 'Up to a reading of', unit),
+        many && (!last || band.up_to) && field('up_to', 'Up to a reading of', unit),
         field('absolute', 'Fixed part', unit),
         field('of_reading', 'Of the reading', '%'),
         field('of_range', 'Of the range', '%'),
@@ -430,4 +430,12 @@ export class Instrument extends Screen {
  */
 function elementId(field) {
   return field.replace(/\W+/g, '-');
+}
+
+/**
+ * The bands without the last one; what is the last one then has no upper end.
+ * @param {Desk.TypedBand[]} bands
+ */
+function withoutLast(bands) {
+  return bands.slice(0, -1).map((band, at) => (at === bands.length - 2 ? { ...band, up_to: '' } : band));
 }

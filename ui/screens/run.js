@@ -6,6 +6,7 @@ import { icon } from '../lib/icons.js';
 import { Latest } from '../lib/latest.js';
 import { address } from '../lib/route.js';
 import { button, goBack, linkButton, Screen } from '../lib/screen.js';
+import { toNext } from '../lib/typing.js';
 import { noteView } from '../parts/note.js';
 import { choose } from '../parts/requirements.js';
 
@@ -145,7 +146,12 @@ export class Run extends Screen {
                 { class: 'field-top' },
                 h('label', { for: `run-${row.probe}` }, row.label),
                 row.offset &&
-                  h('span', { class: row.too_far ? 'wrong-words' : 'mute', 'aria-live': 'polite' }, row.offset),
+                  h(
+                    'span',
+                    { class: row.too_far ? 'too-far' : 'mute', 'aria-live': 'polite' },
+                    row.too_far && icon('odd', 'i-s'),
+                    row.offset,
+                  ),
               ),
               h(
                 'div',
@@ -154,7 +160,9 @@ export class Run extends Screen {
                   id: `run-${row.probe}`,
                   type: 'text',
                   inputmode: 'decimal',
+                  enterkeyhint: 'next',
                   autocomplete: 'off',
+                  onkeydown: toNext,
                   value: text(row),
                   oninput: (/** @type {Event} */ event) =>
                     this.#type(row, /** @type {HTMLInputElement} */ (event.target).value),

@@ -98,22 +98,63 @@ pub(crate) fn read_probe(typed: &TypedProbe, at: &str) -> Result<ReadProbe, Vec<
         }
     }
     if let Err(error) = statement.check() {
-        let field = match error {
-            StatementError::NoRange => "range",
-            StatementError::NoResolution => "resolution",
-            StatementError::CalibrationShare => "calibration_share",
-            StatementError::Negative
-            | StatementError::TooLarge
-            | StatementError::Empty
-            | StatementError::Bands => "bands.0.absolute",
-        };
-        reader.wrong(field, error.to_string());
+        reader.wrong(&place(&statement, &error), error.to_string());
     }
     if reader.errors.is_empty() {
         Ok(ReadProbe { kind, statement, reads: typed.reads.clone() })
     } else {
         Err(reader.errors)
     }
+}
+
+/// The field in which a statement is wrong.
+fn place(statement: &Statement, error: &StatementError) -> String {
+    let bands = &statement.bands;
+    let in_band = |wrong: &dyn Fn(&str, f64) -> bool| {
+        bands.iter().enumerate().find_map(|(index, band)| {
+            [
+                ("absolute", band.absolute),
+                ("of_reading", band.of_reading),
+                ("of_range", band.of_range),
+                ("counts", band.counts),
+            ]
+            .into_iter()
+            .find(|(field, number)| wrong(field, *number))
+            .map(|(field, _)| format!("bands.{index}.{field}"))
+        })
+    };
+    let beside = |field: &str| Some(field.to_owned());
+    let found = match error {
+        StatementError::NoRange => beside("range"),
+        StatementError::NoResolution => beside("resolution"),
+        StatementError::CalibrationShare => beside("calibration_share"),
+        StatementError::Negative => in_band(&|_, number| number < 0.0).or_else(|| {
+            let field = if statement.resolution < 0.0 {
+                "resolution"
+            } else if statement.range.is_some_and(|range| range < 0.0) {
+                "range"
+            } else {
+                "calibration_share"
+            };
+            beside(field)
+        }),
+        StatementError::TooLarge => {
+            in_band(&|field, number| field.starts_with("of_") && number > 0.5)
+        }
+        StatementError::Empty => bands
+            .iter()
+            .position(|band| band.absolute + band.of_reading + band.of_range + band.counts <= 0.0)
+            .map(|index| format!("bands.{index}.absolute")),
+        StatementError::Bands => {
+            let ends: Vec<f64> =
+                bands.iter().map(|band| band.up_to.unwrap_or(f64::INFINITY)).collect();
+            // The end that does not lie below the next one; where all do, the last band has an end.
+            let index =
+                ends.windows(2).position(|pair| pair[0] >= pair[1]).unwrap_or(ends.len() - 1);
+            beside(&format!("bands.{index}.up_to"))
+        }
+    };
+    found.unwrap_or_else(|| "bands.0.absolute".to_owned())
 }
 
 /// A day as typed.

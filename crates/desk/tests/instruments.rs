@@ -191,6 +191,41 @@ fn an_impossible_statement_is_refused_at_its_field() {
     assert_eq!(fault.message, "An instrument needs a name, as the team calls it.");
 }
 
+/// Each is wrong in one band or one number beside them; that field is marked, and no other.
+#[test]
+fn what_is_wrong_with_a_statement_stands_at_its_field() {
+    let open = Open::new();
+    let band = |absolute: &str, up_to: &str| TypedBand {
+        absolute: absolute.to_owned(),
+        up_to: up_to.to_owned(),
+        ..TypedBand::default()
+    };
+    let probe = |bands: Vec<TypedBand>| TypedProbe {
+        quantity: "air_flow".to_owned(),
+        unit: "L/s".to_owned(),
+        bands,
+        ..TypedProbe::default()
+    };
+    let large = TypedBand { of_reading: "60".to_owned(), ..band("", "") };
+    let cases = [
+        (probe(vec![band("3", "50"), band("", "")]), "bands.1.absolute"),
+        (probe(vec![band("3", "50"), band("-1", "")]), "bands.1.absolute"),
+        (probe(vec![band("3", "50"), large]), "bands.1.of_reading"),
+        (probe(vec![band("3", ""), band("4", "")]), "bands.0.up_to"),
+        (probe(vec![band("3", "50"), band("4", "20"), band("5", "")]), "bands.0.up_to"),
+        (probe(vec![band("3", "50")]), "bands.0.up_to"),
+        (TypedProbe { resolution: "-1".to_owned(), ..probe(vec![band("3", "")]) }, "resolution"),
+    ];
+    for (probe, field) in cases {
+        let typed = TypedInstrument { probes: vec![probe], ..TypedInstrument::default() };
+        let request =
+            Request::InstrumentForm { instrument: None, class: None, typed: Some(typed.clone()) };
+        let Reply::InstrumentForm(form) = open.ask(request) else { unreachable!() };
+        let fields: Vec<&str> = form.errors.iter().map(|error| error.field.as_str()).collect();
+        assert_eq!(fields, [format!("probes.0.{field}")], "{typed:?}");
+    }
+}
+
 /// The worked coil of the uncertainty tests, at 95 %: total ± 2807 W, moisture ± 0.000602 kg/s with the pressure's own
 /// doubt, which differs here (a barometer's 0.1 %): within 1 %.
 #[test]
@@ -356,6 +391,11 @@ fn a_requirement_gets_one_of_three_answers() {
         untold.decides
     );
     assert!(untold.share.as_ref().unwrap().starts_with("No share of 48.0\u{a0}kW is given"));
+    // 44 kW lies 4.3 standard uncertainties below the 50.2 kW read.
+    let certain = solved.requirements.verdicts[0].chance.as_deref();
+    assert_eq!(certain, Some("more than 99.9\u{a0}% likely to be met"));
+    let hopeless = solved.requirements.verdicts[3].chance.as_deref();
+    assert_eq!(hopeless, Some("less than 0.1\u{a0}% likely to be met"));
 }
 
 #[test]
