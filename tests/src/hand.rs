@@ -61,6 +61,28 @@ impl Hand {
         self.settle().await;
     }
 
+    /// Taps the button of this id.
+    pub async fn press(&self, id: &str) {
+        let element = self.find(Locator::Id(id)).await;
+        self.client
+            .execute(
+                "arguments[0].scrollIntoView({block: 'center'}); arguments[0].click();",
+                vec![serde_json::to_value(&element).expect("an element crosses")],
+            )
+            .await
+            .unwrap_or_else(|error| panic!("{id} cannot be tapped: {error}"));
+        self.settle().await;
+    }
+
+    /// Picks from the list of this id what says this.
+    pub async fn pick(&self, id: &str, says: &str) {
+        let list = self.find(Locator::Id(id)).await;
+        list.select_by_label(says)
+            .await
+            .unwrap_or_else(|error| panic!("{id} has no “{says}”: {error}"));
+        self.settle().await;
+    }
+
     /// Goes where a link of the page leads whose address holds this.
     pub async fn follow(&self, part: &str) {
         let path = format!("(//a[contains(@href, {})])[1]", literal(part));

@@ -25,8 +25,18 @@ const RUN: &str = "
 ";
 
 /// The screens that need no identity in their address.
-const PLAIN: &[&str] =
-    &["#/", "#/checks", "#/sites", "#/sites/new", "#/units", "#/appearance", "#/about"];
+const PLAIN: &[&str] = &[
+    "#/",
+    "#/checks",
+    "#/sites",
+    "#/sites/new",
+    "#/instruments",
+    "#/instruments/new",
+    "#/instruments/new?class=aspirated_psychrometer",
+    "#/units",
+    "#/appearance",
+    "#/about",
+];
 
 async fn holds(driver: &Driver, axe: &str, screen: &str) {
     // A client runs scripts outside the page's policy, as a person's own tools would.
@@ -64,6 +74,20 @@ async fn every_screen(driver: &Driver, hand: &Hand, axe: &str) {
         hand.go(&format!("{site}{form}")).await;
         holds(driver, axe, form).await;
     }
+    hand.go(site).await;
+    hand.follow("#/visit/").await;
+    hand.follow("/run/new").await;
+    holds(driver, axe, "probes side by side").await;
+    hand.go("#/instruments").await;
+    hand.follow("#/instrument/").await;
+    holds(driver, axe, "an instrument").await;
+    hand.type_at("probes-0-due", "soon").await;
+    // What is only cleared tells the page nothing; a blank that is typed does.
+    hand.type_at("name", " ").await;
+    hand.tap("Keep it").await;
+    hand.sees("An instrument needs a name").await;
+    holds(driver, axe, "an instrument that is refused").await;
+    a_reading_and_what_is_asked(driver, hand, axe).await;
     // A refused form: two bulbs the wrong way round.
     hand.go("#/check/air_state").await;
     hand.type_into("pressure.elevation", "1609 m").await;
@@ -71,6 +95,52 @@ async fn every_screen(driver: &Driver, hand: &Hand, axe: &str) {
     hand.type_into("air.wet_bulb", "80 F").await;
     hand.go("#/checks").await;
     holds(driver, axe, "after a refusal").await;
+}
+
+/// The sheets of a reading and of a requirement, and the form with verdicts.
+async fn a_reading_and_what_is_asked(driver: &Driver, hand: &Hand, axe: &str) {
+    hand.go("#/check/air_state").await;
+    hand.type_into("pressure.elevation", "1609 m").await;
+    hand.type_into("air.dry_bulb", "24 C").await;
+    hand.type_into("air.wet_bulb", "17 C").await;
+    hand.press("field-air-wet_bulb-pm").await;
+    hand.tap("Read with").await;
+    hand.tap("Psychrometer 2, wet bulb").await;
+    hand.sees("What the ± is made of").await;
+    holds(driver, axe, "what a reading was read with").await;
+    hand.tap("Place").await;
+    hand.tap("Over a grid of points").await;
+    hand.type_at("spot-spread", "0.4").await;
+    hand.sees("Say how many points").await;
+    holds(driver, axe, "where a reading was taken").await;
+    hand.tap("Not said").await;
+    hand.tap("Takes").await;
+    for text in ["17 C", "17.1 C", "seventeen"] {
+        hand.type_at("take-text", text).await;
+        hand.tap("Take").await;
+        hand.sees(text).await;
+    }
+    holds(driver, axe, "takes").await;
+    driver
+        .client
+        .execute(
+            "document.querySelector('dialog .takes li:last-child button').click();",
+            Vec::new(),
+        )
+        .await
+        .unwrap();
+    hand.tap("Done").await;
+    for (limit, answer) in [("15 C", "Dew point: at least 15.0 °C"), ("much", "is not a number")] {
+        hand.tap("Hold a result against a requirement").await;
+        hand.pick("asked-figure", "Dew point").await;
+        hand.type_at("asked-value", limit).await;
+        holds(driver, axe, "a requirement").await;
+        hand.tap("Hold it against this").await;
+        hand.sees(answer).await;
+    }
+    holds(driver, axe, "verdicts").await;
+    hand.go("#/").await;
+    hand.tap("Discard").await;
 }
 
 fn look(shape: Value) {

@@ -34,6 +34,8 @@ export class Check extends Screen {
   /** @type {string | null} Why the last wish was not granted. */
   #refused = null;
   #filing = false;
+  /** The address is another screen's by now. */
+  #left = false;
   /** @type {Desk.Typed} What stood in the form when it was opened. */
   #first = {};
   #form = new Form(
@@ -90,6 +92,7 @@ export class Check extends Screen {
   }
 
   async leave() {
+    this.#left = true;
     this.#solver.stop();
     this.#drawer.stop();
     clearTimeout(this.#pause);
@@ -137,7 +140,7 @@ export class Check extends Screen {
       this.#draft = reply.draft;
       this.#kept = reply.at;
       // Coming back or reloading leads to the draft, not to a new form.
-      if (this.isConnected && !this.#filing) history.replaceState(history.state, '', address(['draft', reply.draft]));
+      if (!this.#left && !this.#filing) history.replaceState(history.state, '', address(['draft', reply.draft]));
       this.render();
     } catch (error) {
       this.#say(error);

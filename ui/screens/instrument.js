@@ -164,7 +164,7 @@ export class Instrument extends Screen {
     const apart = fault && !(fault.field && find(this, `#${elementId(fault.field)}`)) ? fault.message : null;
     return this.frame(
       {
-        title: form.instrument ? (form.typed.name ?? '') || 'Instrument' : 'New instrument',
+        title: form.instrument ? (typed.name ?? '').trim() || 'Instrument' : 'New instrument',
         where: form.withdrawn ? 'Out of use' : 'What its own paper says overrides what a class says.',
         up: '#/instruments',
         acts: button('Keep it', () => this.#save(), { kind: 'go', icon: 'tick' }),

@@ -4,6 +4,7 @@ use dewledger_checks::book_constants;
 use dewledger_quantities::{Amount, Kind, Quantity, Share, Unit, UnitChoice, show, show_with};
 
 use crate::answer::{Answer, StoredFigure, StoredVersus};
+use crate::places::capital;
 use crate::reply::{
     CautionView, DriverView, Drivers, Headline, MarkView, MinorView, NoteView, PlusMinusView,
     ResultGroup, ResultRow, SplitView, StateView, StepView, Tone, ValueView, Versus, VersusPart,
@@ -269,11 +270,11 @@ pub(crate) fn drivers(answer: &Answer, units: &UnitChoice) -> Drivers {
         .shares
         .iter()
         .take(MOST_DRIVERS)
-        .map(|(source, share)| view(source.clone(), *share))
+        .map(|(source, share)| view(capital(source), *share))
         .collect();
     let rest: f64 = figure.shares.iter().skip(MOST_DRIVERS).map(|(_, share)| share).sum();
     if rest > 0.0 {
-        rows.push(view("all others".to_owned(), rest));
+        rows.push(view("All others".to_owned(), rest));
     }
     let says = figure.shares.first().zip(figure.half_width_si).zip(figure.value.as_ref()).map(
         |(((source, share), half_width), value)| {
@@ -282,8 +283,9 @@ pub(crate) fn drivers(answer: &Answer, units: &UnitChoice) -> Drivers {
             let unit = units.get(value.amount().kind());
             let width = |half_width| show_with(value.amount(), half_width, unit).1.text();
             format!(
-                "Half the ± of {} would bring ± {} down to ± {}.",
-                uncapital(source),
+                // A source may begin with the name that the team gave an instrument: it stays as it was given.
+                "Half the ± of “{}” would bring ±\u{a0}{} down to ±\u{a0}{}.",
+                capital(source),
                 width(half_width),
                 width(better),
             )
