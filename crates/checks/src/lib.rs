@@ -36,6 +36,7 @@ pub mod humidifying;
 pub mod mixing;
 pub mod outdoor_share;
 pub mod recovery;
+pub mod room_air;
 pub mod surface;
 
 pub use check::{About, Check, Group};
@@ -60,6 +61,7 @@ pub static ALL: &[&dyn Check] = &[
     &heat_rise::HeatRise,
     &fan_heat::FanHeat,
     &surface::Surface,
+    &room_air::RoomAir,
     &economizer::Economizer,
 ];
 

@@ -62,6 +62,8 @@ const EVERYDAY: &[(Kind, f64)] = &[
     (Kind::WaterVolume, 4e-3),
     (Kind::Velocity, 2.5),
     (Kind::Duration, 600.0),
+    (Kind::RoomLength, 5.0),
+    (Kind::AirChanges, 10.0 / 3600.0),
     (Kind::HeatingValue, 38e6),
     (Kind::SensibleConstant, 1230.0),
     (Kind::TotalConstant, 1.2),

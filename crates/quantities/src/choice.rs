@@ -44,6 +44,8 @@ const PRESETS: &[(Kind, &str, &str)] = &[
     (Kind::Area, "ft2", "m2"),
     (Kind::WaterVolume, "gal", "L"),
     (Kind::RoomVolume, "ft3", "m3"),
+    (Kind::RoomLength, "ft", "m"),
+    (Kind::AirChanges, "changes/h", "changes/h"),
     (Kind::FuelVolume, "ft3", "m3"),
     (Kind::HeatingValue, "Btu/ft3", "MJ/m3"),
     (Kind::Mass, "lb", "kg"),

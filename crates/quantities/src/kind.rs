@@ -115,6 +115,10 @@ kinds! {
     WaterVolume, "water_volume", "volume of water", "m3", plain;
     /// A volume of a room. Stored in m³.
     RoomVolume, "room_volume", "volume of a room", "m3", plain;
+    /// A side of a room. Stored in m.
+    RoomLength, "room_length", "side of a room", "m", plain;
+    /// How often a flow fills a room's volume in a time. Stored in 1/s.
+    AirChanges, "air_changes", "air changes", "per_s", plain;
     /// A volume of fuel gas, as its meter counts it. Stored in m³.
     FuelVolume, "fuel_volume", "volume of gas", "m3", plain;
     /// Heat that a volume of fuel gas gives, at a stated pressure and temperature. Stored in J/m³.

@@ -20,11 +20,11 @@ pub use choice::{Preset, UnitChoice, WrongUnit};
 pub use kind::Kind;
 pub use plus_minus::{PlusMinus, read_plus_minus};
 pub use quantity::{
-    AirFlow, CondensateFlow, DryAirFlow, Elevation, Enthalpy, EnthalpyDifference, FuelVolume,
-    HeatingValue, HumidityRatio, HumidityRatioDifference, LatentConstant, Mass, MoistureFlow,
-    MoleFraction, PressureDifference, ProcessSlope, Quantity, RelativeHumidity, RoomVolume,
-    SensibleConstant, Share, StandardAirFlow, TotalConstant, VapourPressure, WaterEnthalpy,
-    WaterFlow, WaterVolume, difference,
+    AirChanges, AirFlow, CondensateFlow, DryAirFlow, Elevation, Enthalpy, EnthalpyDifference,
+    FuelVolume, HeatingValue, HumidityRatio, HumidityRatioDifference, LatentConstant, Mass,
+    MoistureFlow, MoleFraction, PressureDifference, ProcessSlope, Quantity, RelativeHumidity,
+    RoomLength, RoomVolume, SensibleConstant, Share, StandardAirFlow, TotalConstant,
+    VapourPressure, WaterEnthalpy, WaterFlow, WaterVolume, difference,
 };
 pub use read::{Entry, ReadError, Typed, read};
 pub use sentence::Sentence;

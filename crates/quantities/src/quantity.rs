@@ -3,7 +3,7 @@
 use std::marker::PhantomData;
 
 use uom::si::f64::{
-    Area, AvailableEnergy, ElectricCurrent, ElectricPotential, Energy, HeatFluxDensity,
+    Area, AvailableEnergy, ElectricCurrent, ElectricPotential, Energy, Frequency, HeatFluxDensity,
     HeatTransfer, Length, LinearPowerDensity, MassDensity, MassRate, Power, Pressure, Ratio,
     SpecificHeatCapacity, SpecificVolume, TemperatureInterval, ThermalConductivity,
     ThermodynamicTemperature, Time, Velocity, Volume, VolumeRate,
@@ -123,6 +123,10 @@ newtypes! {
     WaterVolume(Volume) => WaterVolume;
     /// Volume of a room, m³.
     RoomVolume(Volume) => RoomVolume;
+    /// A side of a room, m.
+    RoomLength(Length) => RoomLength;
+    /// How often a flow fills a room's volume in a time, 1/s.
+    AirChanges(Frequency) => AirChanges;
     /// A volume of fuel gas, m³ as its meter counts it.
     FuelVolume(Volume) => FuelVolume;
     /// A share of a whole or an error, shown in per cent; 1 is 100 %.

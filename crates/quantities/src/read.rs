@@ -273,6 +273,8 @@ fn largest(kind: Kind) -> f64 {
         Kind::Area => 1e5,
         Kind::WaterVolume => 0.9,
         Kind::RoomVolume => 1e6,
+        Kind::RoomLength => 1000.0,
+        Kind::AirChanges => 1.0,
         Kind::FuelVolume => 1e4,
         Kind::HeatingValue => 1e9,
         Kind::Mass => 400.0,

@@ -31,6 +31,7 @@ fn stored(kind: Kind) -> &'static str {
         "s" => "s",
         "v" => "V",
         "a" => "A",
+        "per_s" => "1/s",
         "j_m3_k" => "J/(m3.K)",
         "j_m3" => "J/m3",
         other => panic!("{other} has no UCUM code here"),

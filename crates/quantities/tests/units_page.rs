@@ -140,6 +140,7 @@ fn stored(kind: Kind) -> &'static str {
         "s" => "s",
         "v" => "V",
         "a" => "A",
+        "per_s" => "1/s",
         "j_m3_k" => "J/(m³·K)",
         "j_m3" => "J/m³",
         other => panic!("{other} is not said on the page"),

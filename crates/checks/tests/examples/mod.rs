@@ -128,6 +128,19 @@ fn example(id: &str) -> Option<Example> {
                 ("coil.leaving", T, "13.0 C", "0.3 K"),
             ],
         },
+        "room_air" => Example {
+            choices: &[("exhaust.basis", "actual_room"), ("supply.basis", "actual_room")],
+            readings: &[
+                ("size.length", Kind::RoomLength, "4.8 m", "0.02 m"),
+                ("size.width", Kind::RoomLength, "5.5 m", "0.02 m"),
+                ("size.height", Kind::RoomLength, "2.8 m", "0.02 m"),
+                ("exhaust.rate", Kind::AirFlow, "210 L/s", "6 L/s of hood"),
+                ("supply.rate", Kind::AirFlow, "155 L/s", "5 L/s of hood"),
+                ("between.pressure", Kind::PressureDifference, "-2.1 Pa", "0.4 Pa"),
+                ("between.zero_before", Kind::PressureDifference, "0.1 Pa", "0.1 Pa"),
+                ("between.zero_after", Kind::PressureDifference, "0.3 Pa", "0.1 Pa"),
+            ],
+        },
         "recovery" => Example {
             choices: &[
                 ("pressure.by", "read"),

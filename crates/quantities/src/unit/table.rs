@@ -4,13 +4,13 @@
 
 use super::Scale;
 use crate::Kind::{
-    AirFlow, Area, CondensateFlow, Current, Density, DryAirFlow, Duration, Elevation, Energy,
-    Enthalpy, EnthalpyDifference, FilmCoefficient, FuelVolume, HeatingValue, HumidityRatio,
+    AirChanges, AirFlow, Area, CondensateFlow, Current, Density, DryAirFlow, Duration, Elevation,
+    Energy, Enthalpy, EnthalpyDifference, FilmCoefficient, FuelVolume, HeatingValue, HumidityRatio,
     HumidityRatioDifference, LatentConstant, Length, Mass, MoistureFlow, MoleFraction, Power,
     PowerPerArea, PowerPerLength, Pressure, PressureDifference, ProcessSlope, Ratio,
-    RelativeHumidity, RoomVolume, SensibleConstant, Share, SpecificHeat, SpecificVolume,
-    StandardAirFlow, Temperature, TemperatureDifference, ThermalConductivity, TotalConstant,
-    VapourPressure, Velocity, Voltage, WaterEnthalpy, WaterFlow, WaterVolume,
+    RelativeHumidity, RoomLength, RoomVolume, SensibleConstant, Share, SpecificHeat,
+    SpecificVolume, StandardAirFlow, Temperature, TemperatureDifference, ThermalConductivity,
+    TotalConstant, VapourPressure, Velocity, Voltage, WaterEnthalpy, WaterFlow, WaterVolume,
 };
 use crate::{Kind, Unit};
 
@@ -187,8 +187,8 @@ units! {
     "inH2O" "in. of water (4 °C)" "inches of water at 4 degrees Celsius" "[in_i'H2O]" [scale(PressureDifference, INCH_OF_WATER, 3)]
         ["in. of water", "inches of water", "in. w.c.", "in. w.g.", "\"wc", "\"wg", "iwc", "iwg", "\"H2O", "in. water"];
 
-    "ft" "ft" "feet" "[ft_i]" [scale(Elevation, FOOT, 0), scale(Length, FOOT, 2)] ["feet", "foot", "'"];
-    "m" "m" "metres" "m" [scale(Elevation, 1.0, 0), scale(Length, 1.0, 3)] ["metre", "metres", "meter", "meters"];
+    "ft" "ft" "feet" "[ft_i]" [scale(Elevation, FOOT, 0), scale(Length, FOOT, 2), scale(RoomLength, FOOT, 2)] ["feet", "foot", "'"];
+    "m" "m" "metres" "m" [scale(Elevation, 1.0, 0), scale(Length, 1.0, 3), scale(RoomLength, 1.0, 2)] ["metre", "metres", "meter", "meters"];
     "in" "in" "inches" "[in_i]" [scale(Length, INCH, 2)] ["inch", "inches", "\""];
     "mm" "mm" "millimetres" "mm" [scale(Length, 1e-3, 0)] [];
     "ft2" "ft²" "square feet" "[sft_i]" [scale(Area, FOOT * FOOT, 1)] ["square feet"];
@@ -198,6 +198,7 @@ units! {
     "mL" "mL" "millilitres" "mL" [scale(WaterVolume, 1e-3 * LITRE, 0)] [];
     "ft3" "ft³" "cubic feet" "[cft_i]" [scale(RoomVolume, CUBIC_FOOT, 0), scale(FuelVolume, CUBIC_FOOT, 2)] ["cubic feet"];
     "m3" "m³" "cubic metres" "m3" [scale(RoomVolume, 1.0, 1), scale(FuelVolume, 1.0, 3)] [];
+    "changes/h" "changes/h" "changes an hour" "1/h" [scale(AirChanges, 1.0 / HOUR, 2)] ["/h", "per hour", "ach"];
     "Btu/ft3" "Btu/ft³" "Btu per cubic foot" "[Btu_IT]/[cft_i]" [scale(HeatingValue, BTU / CUBIC_FOOT, 0)] [];
     "MJ/m3" "MJ/m³" "megajoules per cubic metre" "MJ/m3" [scale(HeatingValue, 1e6, 2)] [];
     "kWh/m3" "kWh/m³" "kilowatt hours per cubic metre" "kW.h/m3" [scale(HeatingValue, 1e3 * HOUR, 2)] [];
