@@ -90,11 +90,13 @@ export function openSheet(title, draw) {
     });
     history.pushState({ ...history.state, sheets: open.length }, '');
     dialog.showModal();
+    // What stands at the foot is in sight already.
+    const atFoot = /** @type {HTMLElement | null} */ (dialog.querySelector('[data-first]'));
     const first = /** @type {HTMLElement | null} */ (
-      dialog.querySelector('[data-first]') ??
-        dialog.querySelector('[aria-checked="true"], .sheet-body input, .sheet-body button')
+      dialog.querySelector('[aria-checked="true"], .sheet-body input, .sheet-body button')
     );
-    first?.focus();
+    if (atFoot) atFoot.focus({ preventScroll: true });
+    else first?.focus();
   });
 }
 

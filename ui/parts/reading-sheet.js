@@ -8,6 +8,7 @@ import { say } from '../lib/say.js';
 import { button, go, link } from '../lib/screen.js';
 import { openSheet, sheetActs } from '../lib/sheet.js';
 import { changeSign } from '../lib/typed.js';
+import { toNext } from '../lib/typing.js';
 import { radioRow } from './form-sheets.js';
 
 /** @typedef {import('./form.js').Form} Form */
@@ -137,6 +138,7 @@ function plusMinus(form, view) {
         autocomplete: 'off',
         'aria-label': `± of ${view.name}`,
         value: text,
+        onkeydown: toNext,
         oninput: (/** @type {Event} */ event) =>
           form.plusMinus([view.key], /** @type {HTMLInputElement} */ (event.target).value, unit.id),
       }),
@@ -210,8 +212,10 @@ function held(form, view, beside) {
           id: `spot-${name}`,
           type: 'text',
           inputmode: 'decimal',
+          enterkeyhint: 'next',
           autocomplete: 'off',
           'aria-describedby': `spot-${name}-help`,
+          onkeydown: toNext,
           value: spot[name]?.text ?? '',
           oninput: (/** @type {Event} */ event) =>
             put({
@@ -251,7 +255,9 @@ function held(form, view, beside) {
             id: 'spot-points',
             type: 'text',
             inputmode: 'numeric',
+            enterkeyhint: 'next',
             autocomplete: 'off',
+            onkeydown: toNext,
             value: spot.points ?? '',
             oninput: (/** @type {Event} */ event) =>
               put({ points: /** @type {HTMLInputElement} */ (event.target).value }),

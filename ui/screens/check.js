@@ -362,6 +362,8 @@ function row(label, says, choose) {
  * @param {FocusEvent} event
  */
 function bringIntoSight(event) {
-  const input = /** @type {HTMLElement} */ (event.target);
-  if (input.nodeName === 'INPUT' && matchMedia('(pointer: coarse)').matches) input.scrollIntoView({ block: 'center' });
+  const input = /** @type {HTMLInputElement} */ (event.target);
+  // What opens a sheet stays where it is tapped.
+  if (input.nodeName === 'INPUT' && !input.readOnly && matchMedia('(pointer: coarse)').matches)
+    input.scrollIntoView({ block: 'center' });
 }

@@ -4,6 +4,7 @@ import { ask } from '../api.js';
 import { h } from '../lib/dom.js';
 import { icon } from '../lib/icons.js';
 import { Latest } from '../lib/latest.js';
+import { notice } from '../lib/notice.js';
 import { address } from '../lib/route.js';
 import { button, goBack, linkButton, Screen } from '../lib/screen.js';
 import { toNext } from '../lib/typing.js';
@@ -67,6 +68,7 @@ export class Run extends Screen {
   async #save() {
     try {
       await ask({ ask: 'save_run', visit: this.#visit(), index: this.#index(), typed: this.#typed }, 'visit');
+      notice({ says: 'Kept with the visit' });
       goBack(address(['visit', this.#visit()]));
     } catch (error) {
       this.#fault = /** @type {Error} */ (error).message;
