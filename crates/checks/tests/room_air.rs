@@ -84,6 +84,7 @@ fn one_flow_or_the_pressure_alone_is_enough() {
     put(&mut alone, "between.pressure", Kind::PressureDifference, -3.0);
     let outcome = solve("room_air", &alone);
     assert!((si(&outcome, "room_pressure") + 3.0).abs() < 1e-12);
+    assert!(outcome.waits.is_empty(), "a pressure needs no flow: {:?}", outcome.waits);
     assert!(waits("room_air", &Given::default()).iter().any(|key| key == "between.pressure"));
 }
 

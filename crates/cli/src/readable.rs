@@ -165,6 +165,9 @@ fn say_row(text: &mut String, row: &ResultRow) {
     };
     let plus_minus = row.plus_minus.as_ref().map(|pm| format!("  {}", pm.text)).unwrap_or_default();
     line(text, &format!("  {:LABELS$} {value}{plus_minus}", row.label));
+    if let Some(condition) = &row.condition {
+        line(text, &format!("    {condition}"));
+    }
 }
 
 fn say_note(text: &mut String, note: &NoteView) {

@@ -287,3 +287,14 @@ fn a_requirement_is_held_against_a_result() {
     let said = String::from_utf8(output.stderr).unwrap();
     assert!(said.contains("is no requirement"), "{said}");
 }
+
+/// The sign of a pressure is told in words, so that nobody has to know which side it was counted from.
+#[test]
+fn check_says_the_line_below_a_label() {
+    let output =
+        run(&["check", "room_air", "between.pressure=-2.5 Pa", "between.neighbour=anteroom"], "");
+    assert_eq!(output.status.code(), Some(0));
+    let out = text(&output.stdout);
+    let at = out.lines().position(|line| line.starts_with("  Room above its neighbour")).unwrap();
+    assert_eq!(out.lines().nth(at + 1), Some("    Air flows into the room from the anteroom"));
+}

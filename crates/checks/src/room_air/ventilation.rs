@@ -221,6 +221,8 @@ pub(super) fn work_out(
     let supply = flow(given, &SUPPLY, "supply", airs, outcome)?;
     let spoken_of =
         [&EXHAUST, &SUPPLY].iter().any(|block| given.reading(&block.rate_key(given)).is_some());
+    // A pressure needs no flow beside it.
+    let pressure_alone = !spoken_of && given.reading(super::between::PRESSURE).is_some();
     match &volume {
         Ok(volume) => {
             let of = [
@@ -243,20 +245,15 @@ pub(super) fn work_out(
                 let Some(flow) = flow else { continue };
                 one(flow, *volume, (key, label, field, step), outcome);
             }
-            if !spoken_of {
-                outcome
-                    .waits
-                    .push(Missing::new(EXHAUST.rate_key(given), "the exhaust or the supply"));
-            }
         }
         Err(missing) => {
-            outcome.waits.extend(missing.iter().cloned());
-            if !spoken_of {
-                outcome
-                    .waits
-                    .push(Missing::new(EXHAUST.rate_key(given), "the exhaust or the supply"));
+            if !pressure_alone {
+                outcome.waits.extend(missing.iter().cloned());
             }
         }
+    }
+    if !spoken_of && !pressure_alone {
+        outcome.waits.push(Missing::new(EXHAUST.rate_key(given), "the exhaust or the supply"));
     }
     let offset =
         exhaust.zip(supply).map(|(exhaust, supply)| offset(given, exhaust, supply, outcome));
