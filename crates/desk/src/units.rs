@@ -49,6 +49,7 @@ const EVERYDAY: &[(Kind, f64)] = &[
     (Kind::WaterFlow, 4.29e-3),
     (Kind::CondensateFlow, 3.1e-6),
     (Kind::MoistureFlow, 3.1e-3),
+    (Kind::WaterMassFlow, 4.3),
     (Kind::Power, 41_300.0),
     (Kind::PowerPerArea, 19.0),
     (Kind::PowerPerLength, 7.6),
@@ -68,6 +69,8 @@ const EVERYDAY: &[(Kind, f64)] = &[
     (Kind::SensibleConstant, 1230.0),
     (Kind::TotalConstant, 1.2),
     (Kind::LatentConstant, 3.01e6),
+    (Kind::WaterConstant, 4.19e6),
+    (Kind::InputPerCooling, 0.18),
 ];
 
 /// An everyday value of a quantity, SI; 1 where none is known.

@@ -30,6 +30,7 @@ const PRESETS: &[(Kind, &str, &str)] = &[
     (Kind::WaterFlow, "gal/min", "L/s"),
     (Kind::CondensateFlow, "gal/h", "L/h"),
     (Kind::MoistureFlow, "lb/h", "kg/h"),
+    (Kind::WaterMassFlow, "lb/h", "kg/s"),
     (Kind::Power, "kBtu/h", "kW"),
     (Kind::Energy, "kBtu", "kWh"),
     (Kind::PowerPerArea, "Btu/h.ft2", "W/m2"),
@@ -59,6 +60,8 @@ const PRESETS: &[(Kind, &str, &str)] = &[
     (Kind::SensibleConstant, "Btu/h.cfm.F", "W/(L/s).K"),
     (Kind::TotalConstant, "lb/h.cfm", "kg/m3"),
     (Kind::LatentConstant, "Btu/h.cfm.(lb/lb)", "W/(L/s).(g/kg)"),
+    (Kind::WaterConstant, "Btu/h.(gal/min).F", "kW/(L/s).K"),
+    (Kind::InputPerCooling, "kW/ton", "kW/kW"),
 ];
 
 /// A choice of all units at once.

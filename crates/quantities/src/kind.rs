@@ -87,6 +87,8 @@ kinds! {
     CondensateFlow, "condensate_flow", "condensate by volume", "m3_s", signed;
     /// Mass of water drained, added or evaporated in a time. Stored in kg/s.
     MoistureFlow, "moisture_flow", "moisture by mass", "kg_s", signed;
+    /// Mass of water or of a coolant that passes in a pipe in a time. Stored in kg/s.
+    WaterMassFlow, "water_mass_flow", "water by mass", "kg_s", plain;
     /// Power, heat flow. Stored in W.
     Power, "power", "heat or power", "w", signed;
     /// Energy, an amount of heat. Stored in J.
@@ -145,6 +147,10 @@ kinds! {
     TotalConstant, "total_constant", "total constant", "kg_m3", plain;
     /// Heat per volume flow and humidity-ratio difference, the book's 4840. Stored in J/m³.
     LatentConstant, "latent_constant", "latent constant", "j_m3", plain;
+    /// Heat per volume flow of water and temperature difference, the book's 500. Stored in J/(m³ K).
+    WaterConstant, "water_constant", "water constant", "j_m3_k", plain;
+    /// Electrical input for each cooling that it gives, the trade's kW a ton. Stored in W/W.
+    InputPerCooling, "input_per_cooling", "input per cooling", "ratio", plain;
 }
 
 impl Kind {

@@ -21,10 +21,11 @@ pub use kind::Kind;
 pub use plus_minus::{PlusMinus, read_plus_minus};
 pub use quantity::{
     AirChanges, AirFlow, CondensateFlow, DryAirFlow, Elevation, Enthalpy, EnthalpyDifference,
-    FuelVolume, HeatingValue, HumidityRatio, HumidityRatioDifference, LatentConstant, Mass,
-    MoistureFlow, MoleFraction, PressureDifference, ProcessSlope, Quantity, RelativeHumidity,
-    RoomLength, RoomVolume, SensibleConstant, Share, StandardAirFlow, TotalConstant,
-    VapourPressure, WaterEnthalpy, WaterFlow, WaterVolume, difference,
+    FuelVolume, HeatingValue, HumidityRatio, HumidityRatioDifference, InputPerCooling,
+    LatentConstant, Mass, MoistureFlow, MoleFraction, PressureDifference, ProcessSlope, Quantity,
+    RelativeHumidity, RoomLength, RoomVolume, SensibleConstant, Share, StandardAirFlow,
+    TotalConstant, VapourPressure, WaterConstant, WaterEnthalpy, WaterFlow, WaterMassFlow,
+    WaterVolume, difference,
 };
 pub use read::{Entry, ReadError, Typed, read};
 pub use sentence::Sentence;

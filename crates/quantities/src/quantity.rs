@@ -113,6 +113,8 @@ newtypes! {
     CondensateFlow(VolumeRate) => CondensateFlow;
     /// Mass of water per time, kg/s; positive when the air gains it.
     MoistureFlow(MassRate) => MoistureFlow;
+    /// Mass flow of water or coolant in a pipe, kg/s.
+    WaterMassFlow(MassRate) => WaterMassFlow;
     /// Gauge pressure or pressure difference, Pa.
     PressureDifference(Pressure) => PressureDifference;
     /// Vapour pressure of the water in the air, Pa.
@@ -131,6 +133,8 @@ newtypes! {
     FuelVolume(Volume) => FuelVolume;
     /// A share of a whole or an error, shown in per cent; 1 is 100 %.
     Share(Ratio) => Share;
+    /// Electrical input over the cooling that it gives, W/W.
+    InputPerCooling(Ratio) => InputPerCooling;
     /// Mole fraction of a gas, 1 is all.
     MoleFraction(Ratio) => MoleFraction;
     /// Mass of water, kg.
@@ -164,6 +168,8 @@ composed! {
     TotalConstant => TotalConstant;
     /// Heat per volume flow and humidity-ratio difference, J/m³: the book's 4840.
     LatentConstant => LatentConstant;
+    /// Heat per volume flow of water and temperature difference, J/(m³ K): the book's 500.
+    WaterConstant => WaterConstant;
     /// Heat of a volume of fuel gas, J/m³ at a stated pressure and temperature.
     HeatingValue => HeatingValue;
 }

@@ -261,6 +261,7 @@ fn largest(kind: Kind) -> f64 {
         Kind::WaterFlow => 5.0,
         Kind::CondensateFlow => 0.1,
         Kind::MoistureFlow => 100.0,
+        Kind::WaterMassFlow => 5000.0,
         Kind::Power => 1e9,
         Kind::Energy => 1e15,
         Kind::PowerPerArea | Kind::PowerPerLength => 1e4,
@@ -286,7 +287,8 @@ fn largest(kind: Kind) -> f64 {
         Kind::Current => 1e4,
         Kind::SensibleConstant => 1e4,
         Kind::TotalConstant => 10.0,
-        Kind::LatentConstant => 1e7,
+        Kind::LatentConstant | Kind::WaterConstant => 1e7,
+        Kind::InputPerCooling => 100.0,
     }
 }
 

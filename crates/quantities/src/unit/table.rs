@@ -6,11 +6,12 @@ use super::Scale;
 use crate::Kind::{
     AirChanges, AirFlow, Area, CondensateFlow, Current, Density, DryAirFlow, Duration, Elevation,
     Energy, Enthalpy, EnthalpyDifference, FilmCoefficient, FuelVolume, HeatingValue, HumidityRatio,
-    HumidityRatioDifference, LatentConstant, Length, Mass, MoistureFlow, MoleFraction, Power,
-    PowerPerArea, PowerPerLength, Pressure, PressureDifference, ProcessSlope, Ratio,
-    RelativeHumidity, RoomLength, RoomVolume, SensibleConstant, Share, SpecificHeat,
+    HumidityRatioDifference, InputPerCooling, LatentConstant, Length, Mass, MoistureFlow,
+    MoleFraction, Power, PowerPerArea, PowerPerLength, Pressure, PressureDifference, ProcessSlope,
+    Ratio, RelativeHumidity, RoomLength, RoomVolume, SensibleConstant, Share, SpecificHeat,
     SpecificVolume, StandardAirFlow, Temperature, TemperatureDifference, ThermalConductivity,
-    TotalConstant, VapourPressure, Velocity, Voltage, WaterEnthalpy, WaterFlow, WaterVolume,
+    TotalConstant, VapourPressure, Velocity, Voltage, WaterConstant, WaterEnthalpy, WaterFlow,
+    WaterMassFlow, WaterVolume,
 };
 use crate::{Kind, Unit};
 
@@ -144,9 +145,9 @@ units! {
         [scale(CondensateFlow, GALLON / HOUR, 2), scale(WaterFlow, GALLON / HOUR, 1)] ["gph", "US gph", "US gal/h"];
     "L/min" "L/min" "litres per minute" "L/min" [scale(WaterFlow, LITRE / MINUTE, 1), scale(CondensateFlow, LITRE / MINUTE, 3)] ["lpm"];
     "L/h" "L/h" "litres per hour" "L/h" [scale(CondensateFlow, LITRE / HOUR, 2), scale(WaterFlow, LITRE / HOUR, 0)] [];
-    "lb/h" "lb/h" "pounds per hour" "[lb_av]/h" [scale(DryAirFlow, POUND / HOUR, 0), scale(MoistureFlow, POUND / HOUR, 1)] [];
-    "kg/h" "kg/h" "kilograms per hour" "kg/h" [scale(DryAirFlow, 1.0 / HOUR, 0), scale(MoistureFlow, 1.0 / HOUR, 2)] [];
-    "kg/s" "kg/s" "kilograms per second" "kg/s" [scale(DryAirFlow, 1.0, 3), scale(MoistureFlow, 1.0, 5)] [];
+    "lb/h" "lb/h" "pounds per hour" "[lb_av]/h" [scale(DryAirFlow, POUND / HOUR, 0), scale(MoistureFlow, POUND / HOUR, 1), scale(WaterMassFlow, POUND / HOUR, 0)] [];
+    "kg/h" "kg/h" "kilograms per hour" "kg/h" [scale(DryAirFlow, 1.0 / HOUR, 0), scale(MoistureFlow, 1.0 / HOUR, 2), scale(WaterMassFlow, 1.0 / HOUR, 0)] [];
+    "kg/s" "kg/s" "kilograms per second" "kg/s" [scale(DryAirFlow, 1.0, 3), scale(MoistureFlow, 1.0, 5), scale(WaterMassFlow, 1.0, 3)] [];
 
     "kBtu/h" "kBtu/h" "thousand Btu per hour" "10*3.[Btu_IT]/h" [scale(Power, 1e3 * BTU_PER_HOUR, 1)] ["kBtuh"];
     "Btu/h" "Btu/h" "Btu per hour" "[Btu_IT]/h" [scale(Power, BTU_PER_HOUR, 0)] ["Btuh"];
@@ -223,4 +224,11 @@ units! {
         [scale(LatentConstant, BTU_PER_HOUR / CFM * POUND / GRAIN, 4)] [];
     "W/(L/s).(g/kg)" "W/(L/s) per g/kg" "watts per litre per second per gram per kilogram" "W/(L/s)/(g/kg)"
         [scale(LatentConstant, 1.0 / LITRE / 1e-3, 3)] [];
+    "Btu/h.(gal/min).F" "Btu/(h·(gal/min)·°F)" "Btu per hour, gallon per minute and degree Fahrenheit"
+        "[Btu_IT]/(h.([gal_us]/min).[degR])" [scale(WaterConstant, BTU_PER_HOUR / (GALLON / MINUTE) / FAHRENHEIT, 1)] [];
+    "kW/(L/s).K" "kW/(L/s·K)" "kilowatts per litre per second and kelvin" "kW/((L/s).K)"
+        [scale(WaterConstant, 1e3 / LITRE, 3)] [];
+    "kW/ton" "kW/ton" "kilowatts a refrigeration ton" "kW/(12000.[Btu_IT]/h)"
+        [scale(InputPerCooling, 1e3 / (12_000.0 * BTU_PER_HOUR), 3)] ["kW per ton"];
+    "kW/kW" "kW/kW" "kilowatts a kilowatt of cooling" "kW/kW" [scale(InputPerCooling, 1.0, 4)] [];
 }
