@@ -18,15 +18,18 @@ pub mod takes;
 pub mod verdict;
 
 pub mod flow_block;
+pub mod plant_power;
 pub mod pressure;
 pub mod process;
 pub mod split;
 pub mod state_block;
+pub mod water_side;
 pub mod water_state;
 
 pub mod air_heat;
 pub mod air_state;
 pub mod book_constants;
+pub mod chiller_balance;
 pub mod coil;
 pub mod condensate;
 pub mod economizer;
@@ -38,6 +41,7 @@ pub mod outdoor_share;
 pub mod recovery;
 pub mod room_air;
 pub mod surface;
+pub mod water_heat;
 
 pub use check::{About, Check, Group};
 pub use given::{Given, Moved, Reading};
@@ -62,6 +66,8 @@ pub static ALL: &[&dyn Check] = &[
     &fan_heat::FanHeat,
     &surface::Surface,
     &room_air::RoomAir,
+    &water_heat::WaterHeat,
+    &chiller_balance::ChillerBalance,
     &economizer::Economizer,
 ];
 

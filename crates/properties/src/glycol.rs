@@ -6,7 +6,8 @@
 //! At x = 0 the fits are off pure water by 0.1 %: use [`crate::water`] there.
 
 use dewledger_quantities::{
-    MassDensity, Quantity, Ratio, SpecificHeatCapacity, ThermodynamicTemperature,
+    EnthalpyDifference, MassDensity, Quantity, Ratio, SpecificHeatCapacity,
+    ThermodynamicTemperature,
 };
 
 /// A glycol.
@@ -119,6 +120,9 @@ static PROPYLENE: Fit = Fit {
     pure_density: 1036.0,
 };
 
+/// How far below freezing the fits are still evaluated, K.
+const SLACK_K: f64 = 1.0;
+
 /// Density of water at 20 °C, kg/m³ (IAPWS SR6-08).
 const WATER_DENSITY_20: f64 = 998.2065;
 
@@ -143,8 +147,8 @@ impl Glycol {
         t: ThermodynamicTemperature,
     ) -> Result<f64, GlycolError> {
         let freezing = self.freezing_temperature(strength)?;
-        // A thousandth of a kelvin of slack for a reading at the freezing point itself.
-        if !(freezing.si() - 1e-3..=373.15).contains(&t.si()) {
+        // A reading may lie below freezing by its own ±; the fits are smooth there.
+        if !(freezing.si() - SLACK_K..=373.15).contains(&t.si()) {
             return Err(GlycolError::TemperatureOutOfRange { got: t, freezing });
         }
         let fit = self.fit();
@@ -175,6 +179,31 @@ impl Glycol {
         t: ThermodynamicTemperature,
     ) -> Result<SpecificHeatCapacity, GlycolError> {
         self.value(&self.fit().heat_capacity, strength, t).map(SpecificHeatCapacity::from_si)
+    }
+
+    /// Change of enthalpy from one temperature to another, J/kg: the heat capacity's polynomial integrated exactly.
+    ///
+    /// # Errors
+    ///
+    /// [`GlycolError`] out of range at either end.
+    pub fn enthalpy_change(
+        self,
+        strength: Ratio,
+        from: ThermodynamicTemperature,
+        to: ThermodynamicTemperature,
+    ) -> Result<EnthalpyDifference, GlycolError> {
+        let fit = self.fit();
+        self.value(&fit.heat_capacity, strength, from)?;
+        self.value(&fit.heat_capacity, strength, to)?;
+        let dx = strength.si() - fit.x_base;
+        let integral = |t: ThermodynamicTemperature| {
+            let dt = t.si() - fit.t_base;
+            let rows = fit.heat_capacity.iter().zip([1.0, 2.0, 3.0, 4.0]).rev();
+            dt * rows.fold(0.0, |sum, (row, power)| {
+                sum * dt + row.iter().rev().fold(0.0, |sum, c| sum * dx + c) / power
+            })
+        };
+        Ok(EnthalpyDifference::from_si(integral(to) - integral(from)))
     }
 
     /// Thermal conductivity of the mixture, W/(m K).
@@ -297,6 +326,25 @@ mod tests {
                 let back = glycol.mass_fraction_from_freezing(t).unwrap();
                 assert!((back.si() - strength.si()).abs() < 1e-9);
             }
+        }
+    }
+
+    /// The integral against the heat capacity summed up in small steps (trapezoidal rule).
+    #[test]
+    fn the_enthalpy_change_is_the_heat_capacity_summed_up() {
+        let at = |celsius: f64| ThermodynamicTemperature::from_si(celsius + 273.15);
+        for glycol in [Glycol::Ethylene, Glycol::Propylene] {
+            let x = Ratio::from_si(0.35);
+            let c = |t: f64| glycol.heat_capacity(x, at(t)).unwrap().si();
+            let steps = 1000;
+            let summed: f64 = (0..steps)
+                .map(|step| {
+                    let t = -5.0 + 0.06 * f64::from(step);
+                    0.03 * (c(t) + c(t + 0.06))
+                })
+                .sum();
+            let ours = glycol.enthalpy_change(x, at(-5.0), at(55.0)).unwrap().si();
+            assert!((ours / summed - 1.0).abs() < 1e-9, "{ours} {summed}");
         }
     }
 

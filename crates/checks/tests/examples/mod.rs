@@ -218,6 +218,38 @@ fn example(id: &str) -> Option<Example> {
                 ("surface.temperature", T, "13.9 C", "0.5 K"),
             ],
         },
+        "water_heat" => Example {
+            choices: &[
+                ("water.fluid", "propylene_glycol"),
+                ("water.strength_by", "volume"),
+                ("power.covers", "with_pumps"),
+            ],
+            readings: &[
+                ("water.rate", Kind::WaterFlow, "6.1 L/s", "3 %"),
+                ("water.entering", T, "6.7 C", "0.1 K of stem"),
+                ("water.leaving", T, "12.3 C", "0.1 K of stem in 5 takes"),
+                ("water.volume_share", Kind::Share, "30 %", "2 %"),
+                ("power.input", Kind::Power, "38.5 kW", "2 %"),
+            ],
+        },
+        "chiller_balance" => Example {
+            choices: &[
+                ("evaporator.fluid", "water"),
+                ("condenser.fluid", "water"),
+                ("power.covers", "compressor"),
+                ("motor.kind", "open"),
+            ],
+            readings: &[
+                ("evaporator.rate", Kind::WaterFlow, "15.2 L/s", "3 %"),
+                ("evaporator.entering", T, "12.1 C", "0.1 K of stem"),
+                ("evaporator.leaving", T, "6.6 C", "0.1 K of stem"),
+                ("condenser.rate", Kind::WaterFlow, "19.8 L/s", "3 %"),
+                ("condenser.entering", T, "29.2 C", "0.1 K of stem"),
+                ("condenser.leaving", T, "34.2 C", "0.1 K of stem"),
+                ("power.input", Kind::Power, "66 kW", "2 %"),
+                ("motor.efficiency", Kind::Share, "93 %", "1 %"),
+            ],
+        },
         _ => return None,
     })
 }
