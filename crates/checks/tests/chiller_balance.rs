@@ -42,7 +42,7 @@ fn worked() -> Given {
     let mut given = plant(351_685.284 / cooling * 1e-2, 418_900.0 / rejected * 1e-2);
     for (key, share) in [("evaporator.rate", 0.05), ("condenser.rate", 0.05), ("power.input", 0.02)]
     {
-        let value = given.reading(key).unwrap().amount.si();
+        let value = given.reading(key).expect("it was read").amount.si();
         given = given.within(key, share * value);
     }
     // Temperatures that are known: their own part vanishes.
