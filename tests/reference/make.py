@@ -12,6 +12,7 @@ import outdoor_share
 import recovery
 import room_air
 import surface
+import traverse
 import water_heat
 from common import air, case, fluid, kelvin, process, readings, state
 
@@ -118,7 +119,7 @@ CASES = [
     condensate("drain at 84 kPa", (26.5, "relative_humidity", 0.52), (12.5, "relative_humidity", 0.94), 84_000, 1.9, 3.5, 900.0, 13.0),
 ]
 
-for more in (outdoor_share, coil, recovery, humidifying, heat_rise, fan_heat, surface, room_air, water_heat, economizer):
+for more in (outdoor_share, coil, recovery, humidifying, heat_rise, fan_heat, surface, traverse, room_air, water_heat, economizer):
     CASES += more.CASES
 
 json.dump({"note": "CoolProp alone; [value in SI, relative tolerance, absolute tolerance].", "cases": CASES}, sys.stdout, indent=1)

@@ -1,4 +1,7 @@
-"""Water and glycols by CoolProp: IAPWS-95 for water, its incompressible glycols (Melinder) for mixtures."""
+"""Water and glycols by CoolProp: IAPWS-95 for water, its incompressible glycols (Melinder) for mixtures.
+
+The two formulations of water differ by up to 1e-5 in the heat capacity: hence 2e-5 of a heat.
+"""
 
 from common import fluid, kelvin
 
@@ -25,7 +28,7 @@ def water(title, flow, t1, t2, glycol=None, share=None, power=None):
     density, mass_flow, heat = side(name, flow, t1, t2)
     given = {"water.rate": [flow, "m3/s"], "water.entering": [t1, "degC"], "water.leaving": [t2, "degC"]}
     choices = {"water.fluid": glycol or "water"}
-    out = {"heat": [heat, 5e-6, 0], "density": [density, 5e-6, 0], "mass_flow": [mass_flow, 5e-6, 0]}
+    out = {"heat": [heat, 2e-5, 0], "density": [density, 5e-6, 0], "mass_flow": [mass_flow, 5e-6, 0]}
     if glycol:
         choices["water.strength_by"] = "mass"
         given["water.mass_share"] = [share, "1"]
@@ -45,9 +48,9 @@ def chiller(title, cold, warm, power):
         given |= {f"{name}.rate": [flow, "m3/s"], f"{name}.entering": [t1, "degC"], f"{name}.leaving": [t2, "degC"]}
     choices = {"evaporator.fluid": "water", "condenser.fluid": "water", "power.covers": "compressor", "motor.kind": "hermetic"}
     return plain("chiller_balance", title, choices, given, {
-        "cooling": [cooling, 5e-6, 0], "rejected": [rejected, 5e-6, 0],
-        "misfit": [rejected - cooling - power, 0, 5e-6 * (rejected + cooling)], "performance": [cooling / power, 5e-6, 0],
-        "input_per_cooling": [power / cooling, 5e-6, 0],
+        "cooling": [cooling, 2e-5, 0], "rejected": [rejected, 2e-5, 0],
+        "misfit": [rejected - cooling - power, 0, 2e-5 * (rejected + cooling)], "performance": [cooling / power, 2e-5, 0],
+        "input_per_cooling": [power / cooling, 2e-5, 0],
     })
 
 

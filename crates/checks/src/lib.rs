@@ -41,6 +41,7 @@ pub mod outdoor_share;
 pub mod recovery;
 pub mod room_air;
 pub mod surface;
+pub mod traverse;
 pub mod water_heat;
 
 pub use check::{About, Check, Group};
@@ -65,6 +66,7 @@ pub static ALL: &[&dyn Check] = &[
     &heat_rise::HeatRise,
     &fan_heat::FanHeat,
     &surface::Surface,
+    &traverse::Traverse,
     &room_air::RoomAir,
     &water_heat::WaterHeat,
     &chiller_balance::ChillerBalance,
