@@ -37,7 +37,7 @@ def water(title, flow, t1, t2, glycol=None, share=None, power=None):
     if power:
         choices["power.covers"] = "compressor"
         given["power.input"] = [power, "W"]
-        out["performance"] = [abs(heat) / power, 5e-6, 0]
+        out["performance"] = [abs(heat) / power, 2e-5, 0]
     return plain("water_heat", title, choices, given, out)
 
 
