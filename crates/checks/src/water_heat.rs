@@ -47,6 +47,7 @@ const CAUTIONS: &[Caution] = &[
         title: "Hot water under pressure",
         says: "Open no well, plug or strainer under pressure. Pipes of hot water burn; a plug of a test point can fly out.",
     },
+    plant_power::LIVE_TERMINALS,
     Caution {
         title: "Glycol",
         says: "Ethylene glycol is poisonous and tastes sweet. Let none go to ground or drain; gloves and eyes covered.",

@@ -376,3 +376,10 @@ fn laws_of_the_balance() {
     );
     assert!((heat(&none) - there).abs() < 1e-9 * there);
 }
+
+#[test]
+fn work_that_can_hurt_is_cautioned() {
+    let outcome = solve(ID, &water(4e-3, 6.0, 12.0));
+    let titles: Vec<&str> = outcome.cautions.iter().map(|caution| caution.title).collect();
+    assert_eq!(titles, ["Hot water under pressure", "Live terminals", "Glycol", "Whose judgement"]);
+}
