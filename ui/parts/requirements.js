@@ -26,7 +26,20 @@ export function requirementsView(view, typed, put) {
         'div',
         { class: 'acts' },
         link('Hold a result against a requirement', () => ask(view, null, null, put), 'plus'),
-        view.before.map((before) => link(`Again: ${before.says}`, () => put(before.requirement, null), 'pull')),
+      ),
+    put &&
+      notTaken(view.before, typed).map((before) =>
+        h(
+          'button',
+          {
+            key: `before ${before.says}`,
+            type: 'button',
+            class: 'row',
+            onclick: () => put(before.requirement, null),
+          },
+          h('span', null, h('span', { class: 't' }, before.says), h('span', { class: 's' }, 'Ask the same again')),
+          icon('pull'),
+        ),
       ),
   );
 }
@@ -57,6 +70,16 @@ function verdictView(verdict, typed, view, put) {
         link('Take it off', () => put(null, verdict.index), 'close'),
       ),
   );
+}
+
+/**
+ * What was asked before and does not stand here yet.
+ * @param {Desk.BeforeView[]} before
+ * @param {Desk.TypedRequirement[]} typed
+ */
+function notTaken(before, typed) {
+  const taken = new Set(typed.map((one) => JSON.stringify(one)));
+  return before.filter((one) => !taken.has(JSON.stringify(one.requirement)));
 }
 
 /** @param {string | null} answer */
