@@ -34,6 +34,14 @@ declare namespace Desk {
     title: string;
   };
 
+  /** What stands in a table. */
+  type CellView = {
+    /** It is a number: to the right. */
+    number: boolean;
+    /** The text, with its unit. */
+    text: string;
+  };
+
   /** A change of what is typed. */
   type Change = 
     | {
@@ -84,6 +92,105 @@ declare namespace Desk {
       code: string;
     };
 
+  /** A drag, a pinch, or a step of zoom. */
+  type ChartGesture = {
+    /** The point that stays where it is; none is the middle. */
+    about?: ChartPoint | null;
+    /** Drawn to the right by this, px. */
+    dx_px?: number;
+    /** Drawn down by this, px. */
+    dy_px?: number;
+    /** Made larger by this factor. */
+    zoom: number;
+  };
+
+  /** How a chart is looked at. */
+  type ChartLook = {
+    /** Where the cross was. */
+    cross?: ChartPlace | null;
+    /** Family of lines beside relative humidity. */
+    family?: string | null;
+    /** What was done to a drawing of that window. */
+    gesture?: ChartGesture | null;
+    /** Its height. */
+    height_px: number;
+    /** Begins every identifier in the drawing, so that two charts on a page do not mix: letters and digits. */
+    name: string;
+    /** Where it is put on a drawing of that window. */
+    tap?: ChartPoint | null;
+    /** Size of the text. */
+    text_px: number;
+    /** Width of the paper in CSS pixels. */
+    width_px: number;
+    /** What was looked at; none frames the states. */
+    window?: ChartWindow | null;
+  };
+
+  /** Whose chart it is. */
+  type ChartOf = {
+      /** Identifier of the check. */
+      check: string;
+      of: "form";
+      /** Where the check is made. */
+      place?: Place;
+      /** What is typed. */
+      typed: Typed;
+    } | {
+      /** The entry. */
+      entry: string;
+      of: "entry";
+    };
+
+  /** A place on the chart. */
+  type ChartPlace = {
+    /** Dry bulb, K. */
+    dry_bulb_k: number;
+    /** Humidity ratio, kg/kg. */
+    humidity_ratio_kg_kg: number;
+  };
+
+  /** A point of the drawing. */
+  type ChartPoint = {
+    /** From the left, px. */
+    x_px: number;
+    /** From above, px. */
+    y_px: number;
+  };
+
+  /** The psychrometric chart of a check. */
+  type ChartView = {
+    /** What is read at the cross. */
+    cross?: CrossView | null;
+    /** The chart. */
+    drawing: ShapeView;
+    /** Families of lines that can be drawn. */
+    families: Array<OptionView>;
+    /** The one that is drawn. */
+    family: string;
+    /** It is not the first look. */
+    moved: boolean;
+    /** What the outlines around the states mean, where there are any. */
+    outlines?: string | null;
+    /** The same in words. */
+    says: string;
+    /** The states as a table, with their ±. */
+    table: TableView;
+    /** What is looked at: send it back to look at the same. */
+    window: ChartWindow;
+  };
+
+  /** What is looked at. */
+  type ChartWindow = {
+    /** Left edge, K. */
+    coldest_k: number;
+    /** Lower edge, kg/kg. */
+    driest_kg_kg: number;
+    /** Right edge, K. */
+    warmest_k: number;
+    /** Upper edge, kg/kg. */
+    wettest_kg_kg: number;
+  };
+
   /** A check in a list. */
   type CheckName = {
     /** Air, water or whole equipment. */
@@ -124,6 +231,32 @@ declare namespace Desk {
     unit: UnitView;
     /** All units of its quantity. */
     units: Array<UnitView>;
+  };
+
+  /** What is read at the cross of a chart. */
+  type CrossView = {
+    /** One tap each: put it into a part of the form. */
+    acts: Array<Act>;
+    /** Where it is drawn; none outside of what is looked at. */
+    at?: ChartPoint | null;
+    /** Why there is no air there. */
+    fog?: string | null;
+    /** Where it is: send it back to keep it there. */
+    place: ChartPlace;
+    /** The full state; the two coordinates alone where air cannot be. */
+    rows: Array<ResultRow>;
+  };
+
+  /** One result over a range of another quantity. */
+  type CurveView = {
+    /** The line graph. */
+    drawing: ShapeView;
+    /** The same in words. */
+    says: string;
+    /** The same as a table. */
+    table: TableView;
+    /** What it shows. */
+    title: string;
   };
 
   /** An unfinished form. */
@@ -566,6 +699,9 @@ declare namespace Desk {
     | Solved & {
       reply: "solved";
     }
+    | ChartView & {
+      reply: "chart";
+    }
     | FormOpened & {
       reply: "form";
     }
@@ -660,6 +796,13 @@ declare namespace Desk {
       place?: Place;
       /** What is typed so far. */
       typed: Typed;
+    }
+    | {
+      ask: "chart";
+      /** How it is looked at. */
+      look: ChartLook;
+      /** Whose chart. */
+      of: ChartOf;
     }
     | {
       ask: "start";
@@ -991,6 +1134,18 @@ declare namespace Desk {
     title: string;
   };
 
+  /** An SVG element, to be made as such: no text of it is ever read as markup. */
+  type ShapeView = {
+    /** Its attributes. Classes say what a line is; the stylesheet gives it its ink. */
+    attributes: Record<string, string>;
+    /** What stands in it, back to front. */
+    children?: Array<ShapeView>;
+    /** Name of the element: `path`. */
+    name: string;
+    /** Its text. */
+    text?: string | null;
+  };
+
   /** A site in a list. */
   type SiteRow = {
     /** Invented example data. */
@@ -1035,6 +1190,8 @@ declare namespace Desk {
     cautions: Array<CautionView>;
     /** Which check. */
     check: CheckName;
+    /** Results over a range. */
+    curves: Array<CurveView>;
     /** What decides the headline's ±. */
     drivers: Drivers;
     /** Further results. */
@@ -1051,10 +1208,12 @@ declare namespace Desk {
     sections: Array<SectionView>;
     /** How far it has come. */
     stage: Stage;
-    /** The air states as a table, the equal of the chart. */
+    /** The air states as a table, the equal of the chart; with any, there is a chart to ask for. */
     states: Array<StateView>;
     /** One line under the title: equipment, site, pressure here and where it is from. */
     subtitle: string;
+    /** Tables that are results in themselves. */
+    tables: Array<TableView>;
     /** What the book constants would have said. */
     versus: Array<Versus>;
     /** "waits for air flow", when something is missing. */
@@ -1100,6 +1259,16 @@ declare namespace Desk {
     /** Convention and source. */
     source: string;
     /** What it gives: "Dry-air mass flow". */
+    title: string;
+  };
+
+  /** A table. */
+  type TableView = {
+    /** Heads of its columns. */
+    columns: Array<string>;
+    /** Its rows, as long as there are columns. */
+    rows: Array<Array<CellView>>;
+    /** What it shows. */
     title: string;
   };
 

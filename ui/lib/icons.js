@@ -30,6 +30,8 @@ const paths = {
   over: ['M4 16h16 M12 22V4 M7 9l5-5 5 5'],
   pencil: ['M4 20l1-5L16 4l4 4L9 19z'],
   find: ['M10 4a6 6 0 1 0 0 12a6 6 0 0 0 0-12z M14.5 14.5L21 21'],
+  whole: ['M4 10V4h6 M20 14v6h-6 M4 4l7 7 M20 20l-7-7'],
+  frame: ['M4 9V4h5 M15 4h5v5 M20 15v5h-5 M9 20H4v-5 M9 12h6 M12 9v6'],
   close: ['M5 5l14 14 M19 5L5 19'],
 };
 

@@ -34,14 +34,17 @@ export function dropSheets() {
  * @template Answer
  * @param {string} title
  * @param {(sheet: Sheet<Answer>) => import('./dom.js').Child} draw
+ * @param {'' | 'whole'} [size] `whole` takes the whole window
  * @returns {Promise<Answer | undefined>}
  */
-export function openSheet(title, draw) {
+export function openSheet(title, draw, size = '') {
   return new Promise((resolve) => {
     const before = /** @type {HTMLElement | null} */ (document.activeElement);
     titles += 1;
     const id = `sheet-${titles}`;
-    const dialog = /** @type {HTMLDialogElement} */ (h('dialog', { class: 'sheet', 'aria-labelledby': id }));
+    const dialog = /** @type {HTMLDialogElement} */ (
+      h('dialog', { class: `sheet ${size}`.trim(), 'aria-labelledby': id })
+    );
     /** @type {Answer | undefined} */
     let answer;
     const sheet = {

@@ -5,6 +5,8 @@ import { h, svg } from '../lib/dom.js';
 import { icon, mark } from '../lib/icons.js';
 import { noteView } from './note.js';
 import { requirementsView } from './requirements.js';
+import { drawing } from './shape.js';
+import { tableView } from './table.js';
 
 /** Shown where there is no value. */
 export const dash = '–';
@@ -133,8 +135,10 @@ function percent(share) {
  * @param {(act: Desk.Act) => void} [how.act]
  * @param {Desk.TypedRequirement[]} [how.requirements] as typed
  * @param {import('./requirements.js').Put | null} [how.ask] none where nothing can be changed any more
+ * @param {import('../lib/dom.js').Child} [how.chart]
  */
-export function results(solved, { notes, act, requirements = [], ask = null }) {
+export function results(solved, { notes, act, requirements = [], ask = null, chart = null }) {
+  const groups = solved.groups.filter((group) => group.rows.length > 0);
   return [
     notes.length > 0 &&
       h(
@@ -144,7 +148,11 @@ export function results(solved, { notes, act, requirements = [], ask = null }) {
         notes.map((note) => noteView({ ...note, id: `note-${note.code.replace(/[^a-zA-Z0-9_]+/g, '-')}`, act })),
       ),
     requirementsView(solved.requirements, requirements, ask),
-    solved.groups.filter((group) => group.rows.length > 0).map(groupView),
+    groups.slice(0, 1).map(groupView),
+    chart,
+    solved.curves.map(curveView),
+    solved.tables.map(tableSection),
+    groups.slice(1).map(groupView),
     solved.versus.length > 0 &&
       h(
         'section',
@@ -153,6 +161,34 @@ export function results(solved, { notes, act, requirements = [], ask = null }) {
         solved.versus.map((versus, at) => versusView(versus, at === 0)),
       ),
   ];
+}
+
+/** @param {Desk.CurveView} curve @param {number} at */
+function curveView(curve, at) {
+  const id = `curve-${at}`;
+  return h(
+    'section',
+    { key: id, class: 'sec curve', 'aria-labelledby': id },
+    head(id, curve.title),
+    drawing(curve.drawing, { role: 'img', 'aria-label': curve.says }),
+    h(
+      'details',
+      null,
+      h('summary', null, h('span', null, 'The same as a table'), icon('down', 'i-s')),
+      tableView(curve.table, { titled: true }),
+    ),
+  );
+}
+
+/** @param {Desk.TableView} table @param {number} at */
+function tableSection(table, at) {
+  const id = `table-${at}`;
+  return h(
+    'section',
+    { key: id, class: 'sec', 'aria-labelledby': id },
+    head(id, table.title),
+    tableView(table, { titled: true }),
+  );
 }
 
 /**

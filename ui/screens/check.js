@@ -13,6 +13,7 @@ import { say, sayInQuiet } from '../lib/say.js';
 import { button, go, goBack, goInstead, Screen } from '../lib/screen.js';
 import { openSheet } from '../lib/sheet.js';
 import { differs } from '../lib/typed.js';
+import { ChartPanel } from '../parts/chart.js';
 import { Form } from '../parts/form.js';
 import { noteView } from '../parts/note.js';
 import { placeSheet } from '../parts/place-sheet.js';
@@ -61,6 +62,11 @@ export class Check extends Screen {
   );
   /** Waits for a pause in typing before draws are asked for. */
   #pause = 0;
+  #chart = new ChartPanel(
+    'chart',
+    () => this.render(),
+    (act) => this.#form.act(act),
+  );
   #keeper = new Keeper((/** @type {Kept} */ kept) => this.#keep(kept));
 
   async load() {
@@ -72,6 +78,7 @@ export class Check extends Screen {
     this.#form.typed = opened.typed;
     this.#solved = opened.solved;
     this.#form.see(opened.solved.sections, opened.solved.notes);
+    this.#charted(opened.solved);
     this.#drawLater();
   }
 
@@ -117,6 +124,7 @@ export class Check extends Screen {
   #take(solved) {
     this.#solved = solved;
     this.#form.see(solved.sections, solved.notes);
+    this.#charted(solved);
     this.render();
     this.#drawLater();
     sayInQuiet(spoken(solved));
@@ -128,6 +136,18 @@ export class Check extends Screen {
     if (!this.#solved?.wants_draws) return;
     const now = { typed: this.#form.typed, place: this.#place };
     this.#pause = window.setTimeout(() => this.#drawer.ask(now), quietMs);
+  }
+
+  /** Every check that has air states shows its chart. @param {Desk.Solved} solved */
+  #charted(solved) {
+    const { typed } = this.#form;
+    const check = solved.check.id;
+    this.#chart.show(solved.states.length > 0 ? { of: 'form', check, typed, place: this.#place } : null);
+  }
+
+  settle() {
+    super.settle();
+    this.#chart.fit();
   }
 
   /** @param {Kept} kept */
@@ -296,6 +316,7 @@ export class Check extends Screen {
               results(solved, {
                 notes: form.notesApart(),
                 act: (act) => form.act(act),
+                chart: this.#chart.draw(),
                 requirements: form.typed.requirements ?? [],
                 ask: (requirement, index) => form.put(requirementsPut(form.typed, requirement, index)),
               }),

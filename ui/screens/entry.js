@@ -7,6 +7,7 @@ import { icon } from '../lib/icons.js';
 import { notice, undoMs } from '../lib/notice.js';
 import { address } from '../lib/route.js';
 import { button, go, goInstead, link, linkButton, Screen } from '../lib/screen.js';
+import { ChartPanel } from '../parts/chart.js';
 import { beside, results, strip } from '../parts/result.js';
 import { linkRow, listSection } from '../parts/rows.js';
 
@@ -16,8 +17,17 @@ export class Entry extends Screen {
   /** @type {string | null} */
   #refused = null;
 
+  #chart = new ChartPanel('chart', () => this.render(), null);
+
   async load() {
-    this.#entry = await ask({ ask: 'entry', entry: this.route.entry ?? '' }, 'entry');
+    const entry = this.route.entry ?? '';
+    this.#entry = await ask({ ask: 'entry', entry }, 'entry');
+    this.#chart.show(this.#entry.solved.states.length > 0 ? { of: 'entry', entry } : null);
+  }
+
+  settle() {
+    super.settle();
+    this.#chart.fit();
   }
 
   connectedCallback() {
@@ -179,7 +189,7 @@ export class Entry extends Screen {
           'div',
           { class: 'answer' },
           strip(solved),
-          h('div', { class: 'results' }, results(solved, { notes: solved.notes })),
+          h('div', { class: 'results' }, results(solved, { notes: solved.notes, chart: this.#chart.draw() })),
           !entry.withdrawn &&
             h(
               'div',

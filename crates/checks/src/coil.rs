@@ -252,7 +252,7 @@ fn wet(
             outcome.states.push(StatePoint {
                 key: "adp".into(),
                 label: "Apparatus dew point".into(),
-                mark: Some(Mark { letter: 'D', shape: Shape::HangingTriangle }),
+                mark: Some(Mark { letter: 'D', shape: Shape::Diamond }),
                 air: surface,
             });
             judge(given, entering, leaving, dry_bulb, share, steepness, outcome);

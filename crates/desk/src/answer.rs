@@ -14,6 +14,7 @@ use dewledger_quantities::{
 };
 use serde::{Deserialize, Serialize};
 
+use crate::drawn::{StoredCurve, StoredLine, StoredStateDoubt, StoredTable};
 use crate::reply::{Act, Change};
 use crate::requirements::StoredVerdict;
 
@@ -28,6 +29,15 @@ pub(crate) struct Answer {
     pub(crate) states: Vec<StoredState>,
     pub(crate) versus: Vec<StoredVersus>,
     pub(crate) pressure: Option<Words>,
+    /// The pressure that its chart is drawn for.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub(crate) pressure_pa: Option<f64>,
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub(crate) lines: Vec<StoredLine>,
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub(crate) curves: Vec<StoredCurve>,
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub(crate) tables: Vec<StoredTable>,
     /// What was asked of it, and the answers.
     #[serde(default, skip_serializing_if = "Vec::is_empty")]
     pub(crate) verdicts: Vec<StoredVerdict>,
@@ -165,6 +175,8 @@ pub(crate) struct StoredState {
     pub(crate) dry_bulb_k: f64,
     pub(crate) pressure_pa: f64,
     pub(crate) humidity_ratio_kg_kg: f64,
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub(crate) doubt: Option<StoredStateDoubt>,
 }
 
 impl StoredState {
@@ -291,7 +303,7 @@ fn step(step: &Step) -> StoredStep {
     }
 }
 
-fn state(state: &StatePoint) -> StoredState {
+fn state(state: &StatePoint, worked: &Worked) -> StoredState {
     StoredState {
         key: state.key.to_string(),
         label: state.label.to_string(),
@@ -299,6 +311,7 @@ fn state(state: &StatePoint) -> StoredState {
         dry_bulb_k: state.air.dry_bulb().si(),
         pressure_pa: state.air.pressure().si(),
         humidity_ratio_kg_kg: state.air.humidity_ratio().si(),
+        doubt: worked.state_doubts.get(state.key.as_ref()).map(StoredStateDoubt::of),
     }
 }
 
@@ -331,9 +344,15 @@ impl Answer {
                 .map(|c| (c.title.to_owned(), c.says.to_owned()))
                 .collect(),
             steps: outcome.steps.iter().map(step).collect(),
-            states: outcome.states.iter().map(state).collect(),
+            states: outcome.states.iter().map(|s| state(s, worked)).collect(),
             versus: outcome.versus.iter().map(versus).collect(),
             pressure: outcome.pressure.as_ref().map(Words::of),
+            pressure_pa: dewledger_checks::pressure::here(&worked.informed)
+                .ok()
+                .map(|here| here.pressure.si()),
+            lines: outcome.lines.iter().map(StoredLine::of).collect(),
+            curves: outcome.curves.iter().filter_map(StoredCurve::of).collect(),
+            tables: outcome.tables.iter().map(StoredTable::of).collect(),
             verdicts: Vec::new(),
             draws: None,
         }

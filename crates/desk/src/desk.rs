@@ -12,7 +12,7 @@ use crate::clock::Clock;
 use crate::form_view::check_name;
 use crate::reply::{About, Fault, FaultCode, Reply};
 use crate::request::{Place, Request, Typed};
-use crate::{demo, drafts, entries, instruments, overview, places, runs, units, visits};
+use crate::{chart, demo, drafts, entries, instruments, overview, places, runs, units, visits};
 
 /// The version that entries are filed with.
 pub const VERSION: &str = env!("CARGO_PKG_VERSION");
@@ -95,6 +95,7 @@ impl Desk {
                 checks: dewledger_checks::ALL.iter().map(|check| check_name(*check)).collect(),
             }),
             Request::Solve { check, typed, place } => entries::solve(&at, &check, &typed, &place),
+            Request::Chart { of, look } => chart::chart(&at, &of, &look),
             Request::Start { check, place } => drafts::start(&at, &check, place),
             Request::KeepDraft { draft, check, typed, place, corrects } => {
                 drafts::keep(&mut at, draft, drafts::Kept { check, typed, place, corrects })

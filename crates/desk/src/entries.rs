@@ -12,6 +12,7 @@ use crate::bench::{self, Bench};
 use crate::clock;
 use crate::desk::{Asked, VERSION};
 use crate::drafts::{self, Kept, check, draft_id};
+use crate::drawn;
 use crate::form_view::{Around, check_name, work, work_with_draws};
 use crate::places::{self, equipment_id, json, site_id, visit_id};
 use crate::reply::{
@@ -381,6 +382,8 @@ pub(crate) fn entry(at: &Asked<'_>, entry: &str) -> Result<Reply, Fault> {
         cautions: result_view::cautions(&filed.answer),
         working: result_view::working(&filed.answer, units),
         states: result_view::states(&filed.answer, units),
+        curves: drawn::curves(&filed.answer, units),
+        tables: drawn::tables(&filed.answer, units),
         requirements: crate::reply::RequirementsView {
             figures: Vec::new(),
             directions: Vec::new(),

@@ -19,7 +19,7 @@ use crate::reply::{
 };
 use crate::request::{Typed, TypedRequirement};
 use crate::typed::{Readout, is_begun, plus_minus_unit, read_check, unit_of};
-use crate::{remarks, requirements, result_view, with_view};
+use crate::{drawn, remarks, requirements, result_view, with_view};
 
 /// What surrounds a form.
 #[derive(Debug, Clone)]
@@ -204,6 +204,8 @@ fn put_together(
             .as_ref()
             .map(|answer| result_view::states(answer, units))
             .unwrap_or_default(),
+        curves: answer.as_ref().map(|answer| drawn::curves(answer, units)).unwrap_or_default(),
+        tables: answer.as_ref().map(|answer| drawn::tables(answer, units)).unwrap_or_default(),
         requirements,
         wants_draws,
     };

@@ -5,11 +5,13 @@
 
 mod answer;
 mod bench;
+mod chart;
 mod classes;
 mod clock;
 mod demo;
 mod desk;
 mod drafts;
+mod drawn;
 mod entries;
 mod fault;
 mod form_view;

@@ -1,11 +1,13 @@
 //! What the desk answers: finished text beside every SI value, so that a screen computes nothing.
 
+mod chart;
 mod doubt;
 mod instrument;
 
 use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
+pub use chart::{CellView, ChartView, CrossView, CurveView, ShapeView, TableView};
 pub use doubt::{
     BeforeView, ConditionView, PartView, ReadWith, RequirableView, RequirementsView, RunRow,
     RunView, TakeRow, TakesView, UsualSpot, VerdictView,
@@ -27,6 +29,8 @@ pub enum Reply {
     },
     /// To `solve`.
     Solved(Box<Solved>),
+    /// To `chart`.
+    Chart(Box<ChartView>),
     /// To `start`, `open_draft`, `restore_draft`, `correct`.
     Form(Box<FormOpened>),
     /// To `keep_draft`.
@@ -225,8 +229,12 @@ pub struct Solved {
     pub cautions: Vec<CautionView>,
     /// Formula with numbers put in.
     pub working: Vec<StepView>,
-    /// The air states as a table, the equal of the chart.
+    /// The air states as a table, the equal of the chart; with any, there is a chart to ask for.
     pub states: Vec<StateView>,
+    /// Results over a range.
+    pub curves: Vec<CurveView>,
+    /// Tables that are results in themselves.
+    pub tables: Vec<TableView>,
     /// What is asked of the results, and the answers.
     pub requirements: RequirementsView,
     /// Some ± waits for draws: ask `draw` when typing rests.

@@ -1,5 +1,6 @@
 //! What the screens, the terminal and scripts may ask. One request type; its JSON Schema stands in `docs/desk.schema.json`.
 
+mod chart;
 mod doubt;
 mod instrument;
 
@@ -8,6 +9,7 @@ use std::collections::BTreeMap;
 use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
+pub use chart::{ChartGesture, ChartLook, ChartOf, ChartPlace, ChartPoint, ChartWindow};
 pub use doubt::{TypedRequirement, TypedRun, TypedRunRow, TypedSpot, TypedTake};
 pub use instrument::{TypedBand, TypedInstrument, TypedProbe};
 
@@ -39,6 +41,13 @@ pub enum Request {
         /// Where the check is made.
         #[serde(default)]
         place: Place,
+    },
+    /// The psychrometric chart of a form or an entry, as it is looked at, and what is read at its cross. Stores nothing.
+    Chart {
+        /// Whose chart.
+        of: ChartOf,
+        /// How it is looked at.
+        look: ChartLook,
     },
     /// Opens a new form, with what the place already knows (pressure here). Stores nothing until a draft is kept.
     Start {

@@ -1,9 +1,12 @@
 //! Results drawn from an answer: headline, groups, book constants, what decides the ±, notes, working, states.
 
 use dewledger_checks::book_constants;
+use dewledger_checks::doubt::COVERAGE_95;
+use dewledger_properties::MoistAir;
 use dewledger_quantities::{Amount, Kind, Quantity, Share, Unit, UnitChoice, show, show_with};
 
 use crate::answer::{Answer, StoredFigure, StoredVersus};
+use crate::drawn::StoredStateDoubt;
 use crate::places::capital;
 use crate::reply::{
     CautionView, DriverView, Drivers, Headline, MarkView, MinorView, NoteView, PlusMinusView,
@@ -179,17 +182,7 @@ fn split(answer: &Answer) -> Vec<SplitView> {
 /// The small line under the headline.
 fn minor(answer: &Answer, units: &UnitChoice) -> Vec<MinorView> {
     let view = |figure: &StoredFigure, label: String| {
-        let text = shown(figure).map_or_else(
-            || "–".to_owned(),
-            |amount| {
-                let view = value(amount, figure.half_width_si, units);
-                if view.unit.is_empty() {
-                    view.number
-                } else {
-                    format!("{}\u{a0}{}", view.number, view.unit)
-                }
-            },
-        );
+        let text = in_words(figure, units).unwrap_or_else(|| "–".to_owned());
         MinorView { label, text }
     };
     let mut minor = Vec::new();
@@ -399,40 +392,86 @@ pub(crate) fn working(answer: &Answer, units: &UnitChoice) -> Vec<StepView> {
 
 /// The air states as a table.
 pub(crate) fn states(answer: &Answer, units: &UnitChoice) -> Vec<StateView> {
-    answer
-        .states
-        .iter()
-        .map(|state| {
-            let air = state.air();
-            let row = |key: &str, label: &str, amount: Amount| ResultRow {
-                key: key.to_owned(),
-                label: label.to_owned(),
-                condition: None,
-                value: Some(value(amount, None, units)),
-                plus_minus: None,
-                withheld: None,
-                strong: false,
-            };
-            let mut rows = vec![
-                row("dry_bulb", "Dry bulb", air.dry_bulb().amount()),
-                row("humidity_ratio", "Humidity ratio", air.humidity_ratio().amount()),
-                row("relative_humidity", "Relative humidity", air.relative_humidity().amount()),
-            ];
-            if let Ok(wet_bulb) = air.wet_bulb() {
-                rows.push(row("wet_bulb", "Wet bulb", wet_bulb.reading().amount()));
+    let view = |state: &crate::answer::StoredState| StateView {
+        label: state.label.clone(),
+        mark: state.mark.clone().map(|(letter, shape)| MarkView { letter, shape }),
+        rows: state_rows(&state.air(), state.doubt, units),
+    };
+    answer.states.iter().map(view).collect()
+}
+
+/// A value with nothing beside it.
+pub(crate) fn plain_row(key: &str, label: &str, amount: Amount, units: &UnitChoice) -> ResultRow {
+    ResultRow {
+        key: key.to_owned(),
+        label: label.to_owned(),
+        condition: None,
+        value: Some(value(amount, None, units)),
+        plus_minus: None,
+        withheld: None,
+        strong: false,
+    }
+}
+
+/// A state in full, with the ± of its two coordinates where it is known.
+pub(crate) fn state_rows(
+    air: &MoistAir,
+    doubt: Option<StoredStateDoubt>,
+    units: &UnitChoice,
+) -> Vec<ResultRow> {
+    let row = |key: &str, label: &str, amount: Amount| plain_row(key, label, amount, units);
+    let doubt = doubt.map(StoredStateDoubt::doubt);
+    let within = |row: ResultRow, amount: Amount, u: Option<f64>| match u.filter(|u| *u > 0.0) {
+        None => row,
+        Some(u) => {
+            let half_width = COVERAGE_95 * u;
+            let width = show_with(amount, half_width, units.get(amount.kind())).1;
+            ResultRow {
+                value: Some(value(amount, Some(half_width), units)),
+                plus_minus: Some(PlusMinusView {
+                    text: format!("± {}", width.number),
+                    si: Some(half_width),
+                    interval: None,
+                    pending: false,
+                    missing: None,
+                }),
+                ..row
             }
-            if let Ok(dew_point) = air.dew_point() {
-                rows.push(row("dew_point", "Dew point", dew_point.amount()));
-            }
-            rows.push(row("enthalpy", "Enthalpy", air.enthalpy().amount()));
-            rows.push(row("specific_volume", "Specific volume", air.specific_volume().amount()));
-            StateView {
-                label: state.label.clone(),
-                mark: state.mark.clone().map(|(letter, shape)| MarkView { letter, shape }),
-                rows,
-            }
-        })
-        .collect()
+        }
+    };
+    let (dry_bulb, humidity_ratio) = (air.dry_bulb().amount(), air.humidity_ratio().amount());
+    let mut rows = vec![
+        within(
+            row("dry_bulb", "Dry bulb", dry_bulb),
+            dry_bulb,
+            doubt.and_then(|doubt| doubt.dry_bulb_k),
+        ),
+        within(
+            row("humidity_ratio", "Humidity ratio", humidity_ratio),
+            humidity_ratio,
+            doubt.and_then(|doubt| doubt.humidity_ratio_kg_kg),
+        ),
+        row("relative_humidity", "Relative humidity", air.relative_humidity().amount()),
+    ];
+    if let Ok(wet_bulb) = air.wet_bulb() {
+        rows.push(row("wet_bulb", "Wet bulb", wet_bulb.reading().amount()));
+    }
+    if let Ok(dew_point) = air.dew_point() {
+        rows.push(row("dew_point", "Dew point", dew_point.amount()));
+    }
+    rows.push(row("enthalpy", "Enthalpy", air.enthalpy().amount()));
+    rows.push(row("specific_volume", "Specific volume", air.specific_volume().amount()));
+    rows
+}
+
+/// A figure's value and unit, without the sign that its label says; none where it is withheld.
+pub(crate) fn in_words(figure: &StoredFigure, units: &UnitChoice) -> Option<String> {
+    let view = value(shown(figure)?, figure.half_width_si, units);
+    Some(if view.unit.is_empty() {
+        view.number
+    } else {
+        format!("{}\u{a0}{}", view.number, view.unit)
+    })
 }
 
 /// "Heat removed, total 41.3 kW ± 3.1", for lists.

@@ -85,17 +85,20 @@ pub struct Drawing {
 #[must_use]
 pub fn draw(chart: &Chart<'_>) -> Drawing {
     let sheet = chart.sheet.kept();
-    let window = chart.window.unwrap_or_else(|| home(chart, &sheet));
+    let window = chart.window.unwrap_or_else(|| chart.home());
     let plot = Plot::new(window, &sheet, chart.units);
     let (node, _) = Pen::new(chart, sheet, &plot).draw();
     Drawing { node, says: words::says(chart, &plot), plot }
 }
 
-/// The window that frames all that the check gives.
-fn home(chart: &Chart<'_>, sheet: &Sheet) -> Window {
-    let mut places: Vec<Place> = chart.states.iter().map(|state| state.place).collect();
-    places.extend(chart.lines.iter().flat_map(process::ends));
-    Window::around(&places, chart.units, sheet)
+impl Chart<'_> {
+    /// The first look: the window that frames all that the check gives.
+    #[must_use]
+    pub fn home(&self) -> Window {
+        let mut places: Vec<Place> = self.states.iter().map(|state| state.place).collect();
+        places.extend(self.lines.iter().flat_map(process::ends));
+        Window::around(&places, self.units, &self.sheet.kept())
+    }
 }
 
 /// One drawing under way.

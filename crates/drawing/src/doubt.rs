@@ -20,6 +20,20 @@ pub(crate) struct Ellipse {
     pub(crate) tilt: f64,
 }
 
+impl Ellipse {
+    /// How far it reaches from its middle in a direction (radians, growing clockwise from the right), px.
+    pub(crate) fn reach(&self, angle: f64) -> f64 {
+        let along = angle - self.tilt.to_radians();
+        (along.cos() / self.long).hypot(along.sin() / self.short.max(0.5)).recip()
+    }
+
+    /// Half the width and half the height of the box around it, px.
+    pub(crate) fn half_box(&self) -> (f64, f64) {
+        let (sin, cos) = self.tilt.to_radians().sin_cos();
+        ((self.long * cos).hypot(self.short * sin), (self.long * sin).hypot(self.short * cos))
+    }
+}
+
 /// The ellipse of a doubt whose two parts are known.
 pub(crate) fn ellipse(doubt: &StateDoubt, plot: &Plot) -> Option<Ellipse> {
     let (per_k, per_ratio) = plot.per_unit();
@@ -111,6 +125,12 @@ mod tests {
         assert!((line.tilt + 45.0).abs() < 1e-6 && line.short < 1e-3, "{line:?}");
         let other = ellipse(&doubt(0.5, alike, -0.6), &plot).unwrap();
         assert!((other.tilt - 45.0).abs() < 1e-6);
+        assert!((other.reach(45.0_f64.to_radians()) - other.long).abs() < 1e-9);
+        assert!((other.reach(135.0_f64.to_radians()) - other.short).abs() < 1e-9);
+        // Each coordinate by itself: its own standard uncertainty (elementary).
+        let (half_width, half_height) = other.half_box();
+        assert!((half_width - ELLIPSE_95 * 0.5 * per_k).abs() < 1e-9);
+        assert!((half_height - ELLIPSE_95 * 0.5 * per_k).abs() < 1e-9);
         // Half-axes of a correlation r between equals are sqrt(1 ± r).
         assert!((other.long / other.short - (1.6_f64 / 0.4).sqrt()).abs() < 1e-9);
     }

@@ -71,6 +71,30 @@ impl Family {
         }
     }
 
+    /// One word for it, on a key.
+    #[must_use]
+    pub const fn short(self) -> &'static str {
+        match self {
+            Family::RelativeHumidity => "Humidity",
+            Family::WetBulb => "Wet bulb",
+            Family::Enthalpy => "Enthalpy",
+            Family::SpecificVolume => "Volume",
+        }
+    }
+
+    /// What is drawn when it is chosen.
+    #[must_use]
+    pub const fn help(self) -> &'static str {
+        match self {
+            Family::RelativeHumidity => "Lines of relative humidity alone",
+            Family::WetBulb => "Wet bulb beside relative humidity",
+            Family::Enthalpy => "Enthalpy of moist air beside relative humidity",
+            Family::SpecificVolume => {
+                "Volume of moist air for each mass of dry air, beside relative humidity"
+            }
+        }
+    }
+
     /// The quantity.
     #[must_use]
     pub const fn kind(self) -> Kind {

@@ -104,8 +104,10 @@ impl Placer {
     pub(crate) fn place_if_free(&mut self, spots: impl IntoIterator<Item = Spot>) -> Option<Spot> {
         let free = |spot: &Spot| {
             let fills = &spot.fills;
+            // Two numbers side by side would be read as one.
+            let apart = fills.grown(3.0);
             fills.outside(&self.bounds) <= 0.0
-                && self.words.iter().chain(&self.dots).all(|taken| taken.overlap(fills) <= 0.0)
+                && self.words.iter().chain(&self.dots).all(|taken| taken.overlap(&apart) <= 0.0)
                 && self.lines.iter().all(|(from, to)| fills.clip(*from, *to).is_none())
         };
         let spot =
@@ -142,7 +144,9 @@ mod tests {
         assert!((best.at.x - 40.0).abs() < 1e-9);
         placer.line(Px::new(85.0, -5.0), Px::new(85.0, 50.0));
         assert_eq!(placer.place_if_free([spot(45.0, 0.0), spot(70.0, 0.0), spot(95.0, 0.0)]), None);
-        assert!(placer.place_if_free([spot(62.0, 0.0)]).is_some());
+        // Beside words there is a gap.
+        assert_eq!(placer.place_if_free([spot(62.0, 0.0)]), None);
+        assert!(placer.place_if_free([spot(64.0, 0.0)]).is_some());
         assert_eq!(placer.collisions(), 0);
     }
 

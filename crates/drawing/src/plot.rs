@@ -124,6 +124,18 @@ impl Plot {
         )
     }
 
+    /// The place of the point of the area that is nearest to a point: a finger may come down beside it.
+    #[must_use]
+    pub fn nearest(&self, at: Px) -> Place {
+        let inside = |value: f64, low: f64, high: f64| {
+            if value.is_finite() { value.clamp(low, high) } else { 0.5 * (low + high) }
+        };
+        self.place(Px::new(
+            inside(at.x, self.area.left, self.area.right()),
+            inside(at.y, self.area.top, self.area.bottom()),
+        ))
+    }
+
     /// Pixels for each kelvin and for each kg/kg.
     pub(crate) fn per_unit(&self) -> (f64, f64) {
         (self.area.width / self.window.span_k(), self.area.height / self.window.span_ratio())

@@ -155,7 +155,7 @@ impl Pen<'_> {
         let chosen = match self.chart.family {
             Family::RelativeHumidity => Vec::new(),
             family @ (Family::WetBulb | Family::Enthalpy | Family::SpecificVolume) => {
-                lines(family, (both / (5.0 * size)).clamp(3.0, 12.0))
+                lines(family, (both / (3.2 * size)).clamp(4.0, 14.0))
             }
         };
         let mut nodes = Vec::new();

@@ -36,7 +36,14 @@ impl Pen<'_> {
             .map(|state| (state, self.plot.px(&state.place)))
             .collect();
         for (state, at) in &seen {
-            self.placer.dot(Rect::around(*at, DOT, DOT));
+            let (across, up) = state
+                .doubt
+                .as_ref()
+                .and_then(|doubt| doubt::ellipse(doubt, self.plot))
+                .map_or((DOT, DOT), |ellipse| ellipse.half_box());
+            // A large ± cannot be kept free of words.
+            let most = 2.0 * self.sheet.text;
+            self.placer.dot(Rect::around(*at, across.clamp(DOT, most), up.clamp(DOT, most)));
             group
                 .children
                 .extend(state.doubt.as_ref().and_then(|doubt| doubt::draw(doubt, *at, self.plot)));
@@ -69,12 +76,12 @@ impl Pen<'_> {
         let size = self.sheet.text;
         let lines = self.lines_of(state);
         let keep = state.doubt.as_ref().and_then(|doubt| doubt::ellipse(doubt, self.plot));
-        let room = keep.map_or(0.0, |ellipse| ellipse.long.min(3.0 * size));
+        let room = |angle: f64| keep.map_or(0.0, |ellipse| ellipse.reach(angle).min(3.0 * size));
         let mut best: Option<Pin> = None;
         for step in 0..DIRECTIONS {
             let angle = f64::from(step) / f64::from(DIRECTIONS) * TAU;
             for far in [2.4, 3.2, 4.4, 6.0] {
-                let middle = at.towards(angle, far * size + room);
+                let middle = at.towards(angle, far * size + room(angle));
                 let mark = Rect::around(middle, marks::reach(size), marks::reach(size));
                 // Short leaders, and upwards rather than down, into the open side of the chart.
                 let mut cost = self.placer.cost(&mark)
@@ -93,7 +100,8 @@ impl Pen<'_> {
         self.placer.line(at, pin.middle);
         let angle = (pin.middle.y - at.y).atan2(pin.middle.x - at.x);
         // The leader keeps off the dot and its ±.
-        let start = at.towards(angle, (0.5 * size).max(room.min(pin.middle.distance(at) - size)));
+        let clear = (room(angle) + 2.0).min(pin.middle.distance(at) - size);
+        let start = at.towards(angle, clear.max(0.5 * size));
         let mut nodes = vec![
             Node::of("path", "pc-leader").with(
                 "d",

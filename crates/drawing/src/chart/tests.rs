@@ -145,7 +145,7 @@ fn words_and_marks_keep_off_the_states() {
             return;
         }
         let sheet = chart.sheet.kept();
-        let plot = Plot::new(home(chart, &sheet), &sheet, chart.units);
+        let plot = Plot::new(chart.home(), &sheet, chart.units);
         let (_, placer) = Pen::new(chart, sheet, &plot).draw();
         let here = (chart.pressure, chart.units.preset(), chart.sheet, chart.family);
         let labels: Vec<_> = chart.states.iter().map(|state| &state.label).collect();
