@@ -4,6 +4,7 @@ import json
 import sys
 
 import coil
+import coil_balance
 import economizer
 import fan_heat
 import heat_rise
@@ -119,7 +120,7 @@ CASES = [
     condensate("drain at 84 kPa", (26.5, "relative_humidity", 0.52), (12.5, "relative_humidity", 0.94), 84_000, 1.9, 3.5, 900.0, 13.0),
 ]
 
-for more in (outdoor_share, coil, recovery, humidifying, heat_rise, fan_heat, surface, traverse, room_air, water_heat, economizer):
+for more in (outdoor_share, coil, recovery, humidifying, heat_rise, fan_heat, surface, traverse, room_air, water_heat, coil_balance, economizer):
     CASES += more.CASES
 
 json.dump({"note": "CoolProp alone; [value in SI, relative tolerance, absolute tolerance].", "cases": CASES}, sys.stdout, indent=1)

@@ -139,6 +139,11 @@ impl Given {
         self.kept.get(what).copied()
     }
 
+    /// All values that a check found before, by what they are.
+    pub fn all_kept(&self) -> impl Iterator<Item = (&str, f64)> {
+        self.kept.iter().map(|(what, value)| (what.as_str(), *value))
+    }
+
     /// Keeps what a check found.
     pub(crate) fn keep(&mut self, kept: &BTreeMap<String, f64>) {
         self.kept.extend(kept.iter().map(|(what, value)| (what.clone(), *value)));

@@ -5,6 +5,7 @@
 
 mod check;
 mod given;
+mod least_variance;
 mod outcome;
 mod refusal;
 
@@ -31,6 +32,7 @@ pub mod air_state;
 pub mod book_constants;
 pub mod chiller_balance;
 pub mod coil;
+pub mod coil_balance;
 pub mod condensate;
 pub mod economizer;
 pub mod fan_heat;
@@ -69,6 +71,7 @@ pub static ALL: &[&dyn Check] = &[
     &traverse::Traverse,
     &room_air::RoomAir,
     &water_heat::WaterHeat,
+    &coil_balance::CoilBalance,
     &chiller_balance::ChillerBalance,
     &economizer::Economizer,
 ];

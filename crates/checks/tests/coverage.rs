@@ -148,4 +148,4 @@ macro_rules! checks {
     };
 }
 
-checks! { air_heat air_state book_constants mixing outdoor_share coil condensate recovery humidifying heat_rise fan_heat surface traverse room_air water_heat chiller_balance economizer }
+checks! { air_heat air_state book_constants mixing outdoor_share coil condensate recovery humidifying heat_rise fan_heat surface traverse room_air water_heat coil_balance chiller_balance economizer }

@@ -6,6 +6,7 @@ use super::methods::{Corners, Method, MethodKind, methods};
 use super::{OutdoorShare, SHARE};
 use crate::doubt::terms;
 use crate::given::{Given, Moved};
+use crate::least_variance::solve;
 use crate::outcome::{Figure, Note, Outcome, Role};
 
 /// Beyond this a method does not fit the mean.
@@ -170,34 +171,6 @@ fn weights(covariance: &[Vec<f64>]) -> Option<Vec<f64>> {
         }
         return Some(weights);
     }
-}
-
-/// Gauss elimination with pivoting, for a handful of methods.
-fn solve(mut matrix: Vec<Vec<f64>>, mut right: Vec<f64>) -> Option<Vec<f64>> {
-    let n = right.len();
-    for column in 0..n {
-        let pivot = (column..n).max_by(|one, other| {
-            matrix[*one][column].abs().total_cmp(&matrix[*other][column].abs())
-        })?;
-        if matrix[pivot][column].abs() < f64::MIN_POSITIVE {
-            return None;
-        }
-        matrix.swap(column, pivot);
-        right.swap(column, pivot);
-        for row in column + 1..n {
-            let factor = matrix[row][column] / matrix[column][column];
-            let above = matrix[column].clone();
-            for (cell, above) in matrix[row].iter_mut().zip(&above).skip(column) {
-                *cell -= factor * above;
-            }
-            right[row] -= factor * right[column];
-        }
-    }
-    for row in (0..n).rev() {
-        let known: f64 = (row + 1..n).map(|column| matrix[row][column] * right[column]).sum();
-        right[row] = (right[row] - known) / matrix[row][row];
-    }
-    Some(right)
 }
 
 /// How far each method lies from the mean, over the spread of that distance.

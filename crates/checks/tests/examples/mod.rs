@@ -275,6 +275,26 @@ fn example(id: &str) -> Option<Example> {
                 ("power.input", Kind::Power, "38.5 kW", "2 %"),
             ],
         },
+        "coil_balance" => Example {
+            choices: &[
+                ("pressure.by", "read"),
+                ("flow.basis", "actual_leaving"),
+                ("water.fluid", "water"),
+            ],
+            readings: &[
+                ("pressure.read", Kind::Pressure, "101.325 kPa", "0.2 kPa"),
+                ("entering.dry_bulb", T, "26.7 C", "0.25 K of dry"),
+                ("entering.wet_bulb", T, "19.4 C", "0.25 K of wet"),
+                ("leaving.dry_bulb", T, "12.8 C", "0.25 K of dry"),
+                ("leaving.wet_bulb", T, "12.2 C", "0.25 K of wet in 5 takes"),
+                ("flow.rate", Kind::AirFlow, "2000 L/s", "4 %"),
+                ("water.rate", Kind::WaterFlow, "2.16 L/s", "3 %"),
+                ("water.entering", T, "7.0 C", "0.1 K of stem"),
+                ("water.leaving", T, "12.6 C", "0.1 K of stem"),
+                ("drain.rate", Kind::CondensateFlow, "21.8 L/h", "3 %"),
+                ("drain.temperature", T, "12.8 C", "0.5 K"),
+            ],
+        },
         "chiller_balance" => Example {
             choices: &[
                 ("evaporator.fluid", "water"),
